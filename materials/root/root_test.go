@@ -1,0 +1,65 @@
+package root
+
+import (
+	"errors"
+	"math"
+	"testing"
+
+	"github.com/stretchr/testify/assert"
+	"github.com/stretchr/testify/require"
+)
+
+func TestFindKnownZeros(t *testing.T) {
+	for _, c := range []struct {
+		name       string
+		f          func(float64) float64
+		a, b, want float64
+		calls      int
+	}{
+		// Exact answers; the last two are hard for interpolation.
+		{"cosine", math.Cos, 1, 2, math.Pi / 2, 12},
+		{"cube", func(x float64) float64 { return x*x*x - 27 }, 0, 10, 3, 20},
+		{"reversed ends", func(x float64) float64 { return x*x - 2 }, 2, 0, math.Sqrt2, 20},
+		{"J0, DLMF 10.21 j(0,1) = 2.40482 55576 95773", math.J0, 2, 3, 2.404825557695773, 12},
+		{"step", func(x float64) float64 {
+			if x < 0.3 {
+				return -1
+			}
+			return 1e9
+		}, -1, 1, 0.3, 120},
+		{"steep pole side", func(x float64) float64 { return 1/(x-1) + 1e6 }, -5, 1 - 1e-9, 1 - 1e-6, 120},
+	} {
+		t.Run(c.name, func(t *testing.T) {
+			calls := 0
+			got, err := Find(func(x float64) (float64, error) { calls++; return c.f(x), nil }, c.a, c.b, 0)
+			require.NoError(t, err)
+			assert.InEpsilon(t, c.want, got, 4e-16)
+			assert.LessOrEqual(t, calls, c.calls)
+		})
+	}
+}
+
+func TestFindRefuses(t *testing.T) {
+	same := func(float64) (float64, error) { return 1, nil }
+	_, err := Find(same, 0, 1, 0)
+	assert.ErrorIs(t, err, ErrNoBracket)
+	nan := func(float64) (float64, error) { return math.NaN(), nil }
+	_, err = Find(nan, 0, 1, 0)
+	assert.ErrorIs(t, err, ErrNotFinite)
+	own := errors.New("own")
+	_, err = Find(func(x float64) (float64, error) { return x - 0.5, own }, 0, 1, 0)
+	assert.ErrorIs(t, err, own)
+}
+
+func FuzzFind(f *testing.F) {
+	f.Add(0.0, 1.0, 0.25, 1.0)
+	f.Add(-math.MaxFloat64, math.MaxFloat64, 3.0, 1e-300)
+	f.Add(-1.0, 1.0, 0.0, 1e300)
+	f.Add(math.Inf(-1), math.Inf(1), 0.0, 1.0)
+	f.Fuzz(func(t *testing.T, a, b, zero, slope float64) {
+		x, err := Find(func(x float64) (float64, error) { return slope * (x - zero), nil }, a, b, 0)
+		if err == nil && math.IsNaN(x) {
+			t.Fatalf("NaN without an error: a %v, b %v, zero %v, slope %v", a, b, zero, slope)
+		}
+	})
+}
