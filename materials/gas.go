@@ -1,0 +1,52 @@
+package materials
+
+import (
+	"math"
+
+	"glassthread/materials/domain"
+	"glassthread/materials/taylor"
+)
+
+// Gas is a medium so thin that its index itself is a sum of oscillators:
+//
+//	n = 1 + sum of A x^2 / (x^2 - L^2),  x the vacuum wavelength.
+//
+// The zero Gas is vacuum.
+type Gas struct {
+	Name   string         // what the gas is
+	Terms  [maxTerms]Term // A: pure number, L: resonance wavelength (m)
+	Range  Range          // vacuum wavelengths (m) over which the fit holds
+	Source Source
+}
+
+// Taylor returns the series of the index about a vacuum wavelength (m). It fails
+// outside Range; the error matches ErrRange.
+func (g Gas) Taylor(wavelength float64) (taylor.Series, error) {
+	if err := domain.Positive("materials.Gas", "wavelength", wavelength, "m"); err != nil {
+		return taylor.Series{}, err
+	}
+	if err := g.Range.check("materials.Gas", "wavelength", wavelength, "m"); err != nil {
+		return taylor.Series{}, err
+	}
+	n := oscillators(&g.Terms, wavelength).Shift(1)
+	return n, checkSeries(n, wavelength)
+}
+
+// Air returns dry air at 15 C and 101.325 kPa with 450 ppm of CO2, 0.23 to
+// 1.69 um (P. E. Ciddor, Appl. Opt. 35, 1566, 1996).
+func Air() Gas {
+	// Published as c/(d - x^-2) with x in um, which is (c/d) x^2/(x^2 - 1/d).
+	const d1, d2 = 238.0185, 57.362
+	return Gas{
+		Name: "air",
+		Terms: [maxTerms]Term{
+			{0.05792105 / d1, micrometre / math.Sqrt(d1)},
+			{0.00167917 / d2, micrometre / math.Sqrt(d2)},
+		},
+		Range: Range{0.23e-6, 1.69e-6},
+		Source: Source{
+			Citation:   "P. E. Ciddor, Appl. Opt. 35, 1566 (1996); open record (CC0) of refractiveindex.info",
+			Conditions: "dry air, 15 C, 101.325 kPa, 450 ppm CO2",
+		},
+	}
+}
