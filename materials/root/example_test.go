@@ -13,3 +13,10 @@ func ExampleFind() {
 	fmt.Printf("%.12f %v\n", x, err)
 	// Output: 2.404825557696 <nil>
 }
+
+// Both zeros of a parabola, though they share a cell.
+func ExampleAll() {
+	zeros, err := root.All(func(x float64) (float64, float64, error) { return x*x - 0.01, 2 * x, nil }, -1, 1, 1)
+	fmt.Printf("%.12f %v\n", zeros, err)
+	// Output: [-0.100000000000 0.100000000000] <nil>
+}

@@ -63,3 +63,26 @@ func FuzzFind(f *testing.F) {
 		}
 	})
 }
+
+func TestAll(t *testing.T) {
+	cube := func(x float64) (float64, float64, error) { return x * (x - 1) * (x - 2), 3*x*x - 6*x + 2, nil }
+	zeros, err := All(cube, -0.5, 3, 10)
+	require.NoError(t, err)
+	assert.InDeltaSlice(t, []float64{0, 1, 2}, zeros, 1e-15)
+	// Two zeros 2e-3 apart in a cell of width 1; a zero at each end; none.
+	pair := func(x float64) (float64, float64, error) { return (x-0.3)*(x-0.3) - 1e-6, 2 * (x - 0.3), nil }
+	zeros, err = All(pair, 0, 2, 2)
+	require.NoError(t, err)
+	assert.InDeltaSlice(t, []float64{0.299, 0.301}, zeros, 1e-12)
+	zeros, err = All(func(x float64) (float64, float64, error) { return 1 - x*x, -2 * x, nil }, -1, 1, 4)
+	require.NoError(t, err)
+	assert.Equal(t, []float64{-1, 1}, zeros)
+	zeros, err = All(func(x float64) (float64, float64, error) { return 1 + x*x, 2 * x, nil }, -1, 1, 5)
+	require.NoError(t, err)
+	assert.Empty(t, zeros)
+	_, err = All(func(x float64) (float64, float64, error) { return math.NaN(), 0, nil }, -1, 1, 5)
+	assert.ErrorIs(t, err, ErrNotFinite)
+	own := errors.New("own")
+	_, err = All(func(x float64) (float64, float64, error) { return 0, 0, own }, -1, 1, 5)
+	assert.ErrorIs(t, err, own)
+}

@@ -1,0 +1,141 @@
+// Package bessel holds the Bessel functions of integer order that the modes of a
+// round fibre are made of: ratios of neighbouring orders of J, K and I, the
+// exponentially scaled K and I, and the zeros of J.
+//
+// A mode's eigenvalue equation needs ratios, not values. A ratio neither
+// overflows nor underflows where both functions do, and its derivative is
+// arithmetic (the Riccati equation): with j = J_{l+1}/J_l, k = K_{l+1}/K_l and
+// i = I_{l+1}/I_l (from DLMF 10.6.2 and 10.29.2)
+//
+//	dj/dx = 1 + j^2 - (2l+1) j/x
+//	dk/dx = k^2 - 1 - (2l+1) k/x
+//	di/dx = 1 - i^2 - (2l+1) i/x.
+//
+// Orders run from 0 to MaxOrder and arguments from 0 (excluded) to MaxArgument.
+// The cost grows in proportion to the order. DLMF is the NIST Digital Library
+// of Mathematical Functions, https://dlmf.nist.gov, chapter 10.
+package bessel
+
+import (
+	"math"
+
+	"glassthread/materials/domain"
+)
+
+// MaxOrder is the highest order and the highest number of a zero accepted.
+const MaxOrder = 100000
+
+// MaxArgument is the largest argument accepted.
+const MaxArgument = 1e6
+
+// eulerGamma is Euler's constant (DLMF 5.2.3).
+const eulerGamma = 0.57721566490153286060651209008240243
+
+// check refuses an order or an argument out of range.
+func check(function string, order int, x float64) error {
+	if err := checkOrder(function, order); err != nil {
+		return err
+	}
+	if x > 0 && x <= MaxArgument {
+		return nil
+	}
+	return &domain.Error{Func: function, Argument: "x", Value: x, Allowed: "above 0 and at most 1e6"}
+}
+
+func checkOrder(function string, order int) error {
+	if order >= 0 && order <= MaxOrder {
+		return nil
+	}
+	return &domain.Error{Func: function, Argument: "l", Value: float64(order), Allowed: "from 0 to 100000"}
+}
+
+// J returns J_l(x). Its error is an absolute one, a few units of 1e-16 times the
+// larger of |J_l(x)| and the amplitude sqrt(2/(pi x)) in the oscillating range;
+// below the turning point x = l it is relative. It underflows to 0 for x far
+// below l.
+func J(l int, x float64) (float64, error) {
+	if err := check("bessel.J", l, x); err != nil {
+		return 0, err
+	}
+	if x > float64(l) {
+		_, j := jPair(l, x)
+		return j, nil
+	}
+	return math.Jn(l, x), nil
+}
+
+// JPair returns J_{l-1}(x) and J_l(x), with J_{-1} = -J_1, for x above l. Their errors
+// are absolute ones against the amplitude they share, of the order of 1e-16, growing
+// like the square root of l. It costs one J_0, one J_1 and l steps of recurrence.
+func JPair(l int, x float64) (below, at float64, err error) {
+	if err := check("bessel.JPair", l, x); err != nil {
+		return 0, 0, err
+	}
+	if !(x > float64(l)) {
+		return 0, 0, &domain.Error{Func: "bessel.JPair", Argument: "x", Value: x, Allowed: "above l"}
+	}
+	below, at = jPair(l, x)
+	return below, at, nil
+}
+
+// jPair returns J_{l-1}(x) and J_l(x) for x > l, by recurrence towards higher
+// orders (DLMF 10.6.1), which is stable there. For l = 0 the first is -J_1.
+func jPair(l int, x float64) (below, at float64) {
+	j0, j1 := math.J0(x), math.J1(x)
+	if l == 0 {
+		return -j1, j0
+	}
+	// The rounding of 2/x would act in every step like the same error of x.
+	two := 2 / x
+	rest := math.FMA(-two, x, 2) / x
+	for k := 1; k < l; k++ {
+		f := float64(k)
+		c := f * two
+		j0, j1 = j1, math.FMA(c, j1, (math.FMA(f, two, -c)+f*rest)*j1-j0)
+	}
+	return j0, j1
+}
+
+// JRatio returns J_{l+1}(x)/J_l(x). Its relative error is of the order of 1e-15,
+// but next to a zero of either function it is the absolute error of x times the
+// slope there that counts. It fails at a zero of J_l that a float64 hits, where
+// the ratio is infinite.
+func JRatio(l int, x float64) (float64, error) {
+	if err := check("bessel.JRatio", l, x); err != nil {
+		return 0, err
+	}
+	r := 0.0
+	if x > float64(l) {
+		a, b := jPair(l+1, x)
+		r = b / a
+	} else {
+		r = jFraction(l, x)
+	}
+	return r, domain.Result("bessel.JRatio", "ratio", r)
+}
+
+// jFraction returns J_{l+1}/J_l for x <= l from the continued fraction DLMF
+// 10.10.2 by the method of W. J. Lentz (Appl. Opt. 15, 668, 1976) as modified by I.
+// J. Thompson and A. R. Barnett (J. Comput. Phys. 64, 490, 1986):
+//
+//	J_{l+1}/J_l = 1/(b_1 - 1/(b_2 - ...)),  b_k = 2(l + k)/x.
+//
+// Every b_k exceeds 2, so that no partial denominator vanishes.
+func jFraction(l int, x float64) float64 {
+	f := 2 * float64(l+1) / x
+	if f > 0x1p30 { // the next term is below half a unit in the last place
+		return 1 / f
+	}
+	c, d := f, 0.0
+	for k := 2; k < 4*MaxOrder; k++ {
+		b := 2 * float64(l+k) / x
+		d = 1 / (b - d)
+		c = b - 1/c
+		step := c * d
+		f *= step
+		if math.Abs(step-1) < 0x1p-53 {
+			break
+		}
+	}
+	return 1 / f
+}

@@ -1,0 +1,84 @@
+package bessel
+
+import (
+	"math"
+
+	"glassthread/materials/domain"
+)
+
+// JZero returns j_{l,m}, the m-th positive zero of J_l, for l from 0 and m from 1
+// to MaxOrder, to half a unit in the last place or little more.
+func JZero(l, m int) (float64, error) {
+	high, _, err := JZeroParts(l, m)
+	return high, err
+}
+
+// JZeroParts returns j_{l,m} as the unevaluated sum of a float64 and a small rest,
+// so that the distance of a nearby x from the zero, (x - high) - low, keeps its
+// digits. The sum has an absolute error of the order of 1e-16.
+func JZeroParts(l, m int) (high, low float64, err error) {
+	if err := checkOrder("bessel.JZero", l); err != nil {
+		return 0, 0, err
+	}
+	if m < 1 || m > MaxOrder {
+		return 0, 0, &domain.Error{Func: "bessel.JZero", Argument: "m", Value: float64(m), Allowed: "from 1 to 100000"}
+	}
+	high, low = jZero(l, m)
+	return high, low, nil
+}
+
+func jZero(l, m int) (high, low float64) {
+	x := jZeroGuess(l, m)
+	nu := float64(l)
+	for range 8 {
+		below, at := jPair(l, x)
+		// Halley's step, from J' = J_{l-1} - l J/x and Bessel's equation: the error
+		// after it is of the order of the step cubed.
+		h := at / (below - nu/x*at)
+		step := h / (1 + h*(1/x+(1-nu/x)*(1+nu/x)*h)/2)
+		high = x - step
+		low = (x - high) - step
+		x = high
+		if math.Abs(step) < 2e-6 {
+			break
+		}
+	}
+	return high, low
+}
+
+// jZeroGuess returns j_{l,m} to an error that is a small part of the distance to
+// its neighbours: McMahon's series for order 0 (DLMF 10.21.19), Olver's uniform
+// one for the others (DLMF 10.21.41 with its first two terms).
+func jZeroGuess(l, m int) float64 {
+	if l == 0 {
+		b := (float64(m) - 0.25) * math.Pi
+		r := 1 / (8 * b)
+		return b + r*(1-r*r*(124./3-r*r*120928./15))
+	}
+	nu := float64(l)
+	// The m-th zero of Ai is -t, from DLMF 9.9.6 and 9.9.18.
+	t := 3 * math.Pi / 8 * float64(4*m-1)
+	t2 := 1 / (t * t)
+	t = math.Cbrt(t*t) * (1 + t2*(5./48-t2*(5./36-t2*77125./82944)))
+	zeta := t / math.Cbrt(nu*nu)
+	tau := tanLessAngle(2. / 3 * zeta * math.Sqrt(zeta))
+	z := math.Sqrt(1 + tau*tau)
+	b0 := 0.018 // 2^(1/3)/70, the limit of what follows for zeta to 0
+	if zeta > 0.2 {
+		b0 = -5/(48*zeta*zeta) + (5/(24*tau*tau*tau)+1/(8*tau))/math.Sqrt(zeta)
+	}
+	h2 := 2 * math.Sqrt(zeta) / tau
+	return nu*z + z*h2*b0/(2*nu)
+}
+
+// tanLessAngle solves tau - atan(tau) = y for y > 0.
+func tanLessAngle(y float64) float64 {
+	tau := math.Cbrt(3*y) * (1 + math.Cbrt(9*y*y)/5)
+	if y > 1 {
+		tau = y + math.Pi/2 - 1/(y+math.Pi/2)
+	}
+	for range 4 {
+		tau -= (tau - math.Atan(tau) - y) * (1 + 1/(tau*tau))
+	}
+	return tau
+}

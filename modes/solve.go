@@ -1,0 +1,341 @@
+package modes
+
+import (
+	"math"
+	"strconv"
+
+	"glassthread/modes/bessel"
+)
+
+func formatV(v float64) string { return strconv.FormatFloat(v, 'g', 10, 64) }
+
+// The eigenvalue equation is x(u) + G(w) = 0 with
+//
+//	x = u J_{l-1}(u)/J_l(u),   G = w K_{l-1}(w)/K_l(w),
+//
+// and in terms of s = u^2 and q = w^2 the Riccati equations of x and G read
+//
+//	dx/ds = -(1 + x (x - 2l)/s)/2,   dG/dq = (G (G + 2l)/q - 1)/2.
+//
+// x falls from 0 at the cut-off zero to minus infinity at j_{l,m}, G is positive
+// and rises with w, so that there is one root between, whatever the method.
+
+const (
+	// nearCutoff is the distance from cut-off in V within which w^2, not u, is the
+	// unknown: u would leave w^2 = V^2 - u^2 too few digits.
+	nearCutoff = 0.5
+	// smallV is the V below which LP01 is solved for ln w^2.
+	smallV = 1.6
+	// tinyW2 is ln w^2 below which w^2 no longer matters beside V^2.
+	tinyW2    = -40
+	maxPasses = 60
+)
+
+// logTwoLessGamma is ln 2 - gamma: 1/G = ln(2/w) - gamma + O(w^2) for l = 0, since
+// K_0 is that and w K_1 is 1 (DLMF 10.31.2, 10.30.2).
+const logTwoLessGamma = math.Ln2 - 0.57721566490153286060651209008240243
+
+// solveLP solves a guided mode: cut is the float64 nearest its cut-off, above the
+// distance of v from the cut-off, end the zero j_{l,m}.
+func solveLP(v float64, l, m int, cut, above, end float64) LP {
+	p := LP{L: l, M: m, V: v}
+	switch {
+	case cut == 0 && v < smallV:
+		p.solveSmall()
+	case cut > 0 && above < nearCutoff && l == 0:
+		p.solveNearCutoff0(cut, above)
+	case cut > 0 && above < nearCutoff:
+		p.solveNearCutoff(cut, above)
+	default:
+		p.solvePhase(cut, end)
+	}
+	return p
+}
+
+// setW completes the mode from w.
+func (p *LP) setW(w float64) {
+	p.W = w
+	p.U = math.Sqrt((p.V - w) * (p.V + w))
+	p.B = (w / p.V) * (w / p.V)
+}
+
+// solvePhase solves for u between cut and end by Newton's method on the phase
+//
+//	atan(x/u) + atan(G/u) = atan((u J_{l-1} + G J_l)/(u J_l - G J_{l-1})),
+//
+// which has no poles and is nearly linear in u.
+func (p *LP) solvePhase(cut, end float64) {
+	v, l := p.V, float64(p.L)
+	low, high := cut, math.Min(end, v)
+	u := p.guessU(cut)
+	if !(u > low && u < high) {
+		u = (low + high) / 2
+	}
+	for pass := 0; ; pass++ {
+		q := (v - u) * (v + u)
+		g := decay(p.L, math.Sqrt(q))
+		below, at, _ := bessel.JPair(p.L, u) // u exceeds l, see the zeros
+		phase := math.Atan((u*below + g*at) / (u*at - g*below))
+		if phase > 0 {
+			low = u
+		} else {
+			high = u
+		}
+		p2 := g * (g + 2*l)
+		slope := -1 + (2*l-1)*below*at/(u*(at*at+below*below)) -
+			(u*u*(p2-q)/q+g)/(u*u+g*g)
+		step := phase / slope
+		if math.Abs(step) < 1e-9 || pass == maxPasses {
+			// The error left is of the order of the step squared. V - u is formed
+			// before u is rounded.
+			rest := (v - u) + step
+			p.W = math.Sqrt(rest * (v + (u - step)))
+			p.U = u - step
+			p.B = (rest / v) * ((v + p.U) / v)
+			return
+		}
+		u -= step
+		if !(u > low && u < high) {
+			u = (low + high) / 2
+		}
+	}
+}
+
+// guessU returns u to a per cent or so: Gloge 1971, equation 16 for LP01 and
+// equation 15 for the others, which is exact at cut-off.
+func (p *LP) guessU(cut float64) float64 {
+	v := p.V
+	if cut == 0 {
+		return (1 + math.Sqrt2) * v / (1 + math.Sqrt(math.Sqrt(4+v*v*v*v)))
+	}
+	l := float64(p.L)
+	s := math.Sqrt(math.Max(cut*cut-l*l-1, 1))
+	return cut * math.Exp((math.Asin(s/cut)-math.Asin(s/v))/s)
+}
+
+// decay is bessel.Decay without its checks: w is in range by construction.
+func decay(l int, w float64) float64 {
+	g, _ := bessel.Decay(l, w)
+	return g
+}
+
+// solveNearCutoff solves for q = w^2 when l >= 1 and v is just above the cut-off
+// zero. x comes from its own expansion about the zero, so that x + G keeps its
+// relative accuracy however small q is, and is nearly linear in q.
+func (p *LP) solveNearCutoff(cut, above float64) {
+	v, l := p.V, float64(p.L)
+	most := above * (v + cut) // q where u is the cut-off zero
+	low, high := 0.0, most
+	// To first order x = -cut (above - q/2v) and G = q/(2(l-1)), or q ln(2/w) - gamma
+	// for l = 1.
+	var q float64
+	if p.L == 1 {
+		q = most / 2
+		for range 4 {
+			q = above * cut / (cut/(2*v) + math.Max(logTwoLessGamma-math.Log(q)/2, 0.3))
+		}
+	} else {
+		q = above * cut / (cut/(2*v) + 0.5/(l-1))
+	}
+	for pass := 0; ; pass++ {
+		if !(q > low && q < high) {
+			q = (low + high) / 2
+		}
+		u := math.Sqrt((v + math.Sqrt(q)) * (v - math.Sqrt(q)))
+		rest := q / (v + u)
+		x := nearZero(p.L, cut, above-rest)
+		g := decay(p.L, math.Sqrt(q))
+		f := x + g
+		if f < 0 {
+			low = q
+		} else {
+			high = q
+		}
+		slope := (x*(x-2*l)/(u*u) + g*(g+2*l)/q) / 2
+		step := f / slope
+		q -= step
+		if math.Abs(step) < 1e-9*q || pass == maxPasses {
+			break
+		}
+	}
+	p.setW(math.Sqrt(q))
+}
+
+// solveNearCutoff0 solves for y = ln w^2 when l = 0 and v is just above a cut-off
+// zero: 1/x + 1/G is nearly linear in y, since 1/G is ln(2/w) - gamma for small w.
+func (p *LP) solveNearCutoff0(cut, above float64) {
+	v := p.V
+	x := nearZero(0, cut, above)
+	if y := 2 * (logTwoLessGamma + 1/x); y < tinyW2 {
+		p.setW(math.Exp(y / 2))
+		return
+	}
+	most := math.Log(above * (v + cut))
+	low, high := float64(tinyW2)-1, most
+	y := 2 * (logTwoLessGamma - 1/(cut*above) + 1/(2*cut*cut))
+	if cut*above > 1.1 {
+		y = 2 * math.Log(math.Max(math.Sqrt(2*cut*above)-1, 0.05))
+	}
+	for pass := 0; ; pass++ {
+		if !(y > low && y < high) {
+			y = (low + high) / 2
+		}
+		q := math.Exp(y)
+		w := math.Sqrt(q)
+		u := math.Sqrt((v + w) * (v - w))
+		rest := q / (v + u)
+		x := nearZero(0, cut, above-rest)
+		g := decay(0, w)
+		f := 1/x + 1/g
+		if f > 0 && x < 0 { // falls with y; x >= 0 is rounding at the upper end
+			low = y
+		} else {
+			high = y
+		}
+		dx := -(1 + x*x/(u*u)) / 2
+		slope := q*dx/(x*x) - (g*g-q)/(2*g*g)
+		step := f / slope
+		y -= step
+		if math.Abs(step) < 1e-9 || pass == maxPasses {
+			p.setW(math.Exp(y / 2))
+			return
+		}
+	}
+}
+
+// nearZero returns x = u J_{l-1}(u)/J_l(u) at u = cut + d, d small, where J_{l-1}
+// vanishes at cut: J_{l-1} from its Taylor series about cut, scaled to slope 1,
+// whose terms follow from Bessel's equation, and J_l = (l-1) J_{l-1}/u - J_{l-1}'
+// (DLMF 10.6.2). Near d = 0 the result has the relative accuracy of d.
+func nearZero(l int, cut, d float64) float64 {
+	nu := float64(l - 1)
+	a2 := cut * cut
+	c := (cut - nu) * (cut + nu)
+	// Terms are kept multiplied by powers of d: t[n] = coefficient d^n.
+	t0, t1 := 0.0, d
+	tm1, tm2 := 0.0, 0.0
+	f, df := d, 1.0 // f and its derivative
+	d2 := d * d
+	for n := 0; n < 200; n++ {
+		k := float64(n)
+		next := -(cut*(k+1)*(2*k+1)*d*t1 + (k*k+c)*d2*t0 + 2*cut*d2*d*tm1 + d2*d2*tm2) /
+			(a2 * (k + 2) * (k + 1))
+		f += next
+		slope := (k + 2) * next / d
+		df += slope
+		if math.Abs(slope) < 1e-18 && math.Abs(t1*(k+1)/d) < 1e-18 {
+			break
+		}
+		tm2, tm1, t0, t1 = tm1, t0, t1, next
+	}
+	u := cut + d
+	if d == 0 {
+		return 0
+	}
+	return u * f / (nu*f/u - df)
+}
+
+// solveSmall solves LP01 for y = ln w^2 at small v, where w is near exp(-2/v^2).
+func (p *LP) solveSmall() {
+	v := p.V
+	// 1/x = -J_0/(u J_1) = -2/s + 1/4 + s/96 + ..., s = u^2 (power series division of
+	// DLMF 10.2.2).
+	inverse := func(s float64) float64 { return -2/s + lessPole(s) }
+	y := 2 * (logTwoLessGamma + inverse(v*v))
+	if y < -23 {
+		p.solveTiny()
+		return
+	}
+	if v > 1.2 {
+		y = 2 * math.Log(1.1428*v-0.996) // Rudolph and Neumann 1976
+	}
+	low, high := -24.0, 2*math.Log(v)
+	for pass := 0; ; pass++ {
+		if !(y > low && y < high) {
+			y = (low + high) / 2
+		}
+		q := math.Exp(y)
+		w := math.Sqrt(q)
+		s := (v - w) * (v + w)
+		ix := inverse(s)
+		g := decay(0, w)
+		f := ix + 1/g
+		if f > 0 {
+			low = y
+		} else {
+			high = y
+		}
+		slope := -q*(ix*ix+1/s)/2 - (g*g-q)/(2*g*g)
+		step := f / slope
+		y -= step
+		if math.Abs(step) < 1e-9 || pass == maxPasses {
+			p.setW(math.Exp(y / 2))
+			return
+		}
+	}
+}
+
+// solveTiny solves LP01 where w is below 1e-5. Then, with L = ln(2/w) - gamma,
+//
+//	1/G = L + w^2 (2 L^2 + 2 L + 1)/4 + O(w^4 L^3)
+//
+// and -1/x = 2/s - lessPole(s), s = v^2 - w^2, so that w = exp(-2/v^2) times a factor
+// near 1, which a few passes settle. ln w is never rounded as one number.
+func (p *LP) solveTiny() {
+	v := p.V
+	s := v * v
+	r := 2 / s
+	rest := (math.FMA(-r, s, 2) - r*math.FMA(v, v, -s)) / s // 2/v^2 is r + rest
+	front := math.Exp(-r)
+	w := 0.0
+	for range 4 {
+		q := w * w
+		less := r * (q / s) / (1 - q/s) // 2/(v^2 - q) - 2/v^2
+		h := 0.0
+		if q > 0 {
+			log := logTwoLessGamma - math.Log(w)
+			h = q / 4 * (2*log*(log+1) + 1)
+		}
+		w = front * math.Exp(logTwoLessGamma+lessPole(s-q)-rest-less+h)
+	}
+	p.setW(w)
+}
+
+// lessPole returns 2/s - J_0(u)/(u J_1(u)), s = u^2 <= 2.6. The coefficients are
+// those of the quotient of the two power series: sum over the zeros of J_1 of
+// 2/j^(2k+2), which shrink like 1/14.68^k (Rayleigh sums; DLMF 10.21.57 and G. N.
+// Watson, Theory of Bessel Functions, section 15.51).
+func lessPole(s float64) float64 {
+	sum := 0.0
+	for k := len(rayleigh) - 1; k >= 0; k-- {
+		sum = sum*s + rayleigh[k]
+	}
+	return sum
+}
+
+// rayleigh holds the coefficients of lessPole; at s = 2.56 the first left out is below
+// 1e-17.
+var rayleigh = [22]float64{
+	0.25,
+	0.010416666666666666667,
+	0.00065104166666666666667,
+	0.000043402777777777777778,
+	2.9387297453703703704e-6,
+	1.9981747581845238095e-7,
+	1.3602894239745232584e-8,
+	9.2636574115936321159e-10,
+	6.3092678686041423626e-11,
+	4.2972330457407514763e-12,
+	2.9268660967807218446e-13,
+	1.99350805756454484e-14,
+	1.3577927729101492512e-15,
+	9.2480271545225369849e-17,
+	6.298900258868862817e-18,
+	4.2902280314813480831e-19,
+	2.922106387638576483e-20,
+	1.9902685112653707545e-21,
+	1.3555867664430531848e-22,
+	9.2330028399219022716e-24,
+	6.2886672809642644093e-25,
+	4.2832583133496673187e-26,
+}
