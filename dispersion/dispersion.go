@@ -88,9 +88,9 @@ func series(m materials.Medium, wavelength float64) (taylor.Series, error) {
 	if err != nil {
 		return taylor.Series{}, err
 	}
-	if !n.Finite() {
+	if !n.Finite() || n[0] <= 0 {
 		return taylor.Series{}, &domain.Error{Func: "dispersion", Argument: "wavelength", Value: wavelength,
-			Allowed: "where the medium's index and its derivatives are finite (m)"}
+			Allowed: "where the index and its derivatives are finite and the index above 0 (m)"}
 	}
 	return n, nil
 }

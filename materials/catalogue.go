@@ -16,13 +16,18 @@ var ErrUnknown = errors.New("no such medium in the catalogue")
 // ErrNoFraction says that no composition within range gives what was asked for.
 var ErrNoFraction = errors.New("no composition within range gives it")
 
+// ErrNoThermoOptic says that a medium's behaviour with temperature is not known here.
+var ErrNoThermoOptic = errors.New("no thermo-optic behaviour is known")
+
 // Entry is one medium of the catalogue, or one family of glasses with a mole
 // fraction to choose.
 type Entry struct {
 	Name        string // what Lookup finds it by
 	Composition string
-	Wavelengths Range // vacuum wavelengths (m)
-	Fractions   Range // mole fraction of the dopant; the zero Range when fixed
+	Wavelengths Range       // vacuum wavelengths (m)
+	Fractions   Range       // mole fraction of the dopant; the zero Range when fixed
+	Temperature float64     // at which the index holds (K)
+	ThermoOptic ThermoOptic // nil where none is known here
 	Source      Source
 
 	build func(fraction float64) (Medium, error)
@@ -44,6 +49,32 @@ func (e Entry) Glass(fraction float64) (Medium, error) {
 	}
 	return e.build(fraction)
 }
+
+// GlassAt returns the medium of the given mole fraction at a temperature (K), by the
+// entry's ThermoOptic, which for doped silica is that of pure silica. The error matches ErrRange when the temperature is out of
+// range, and ErrNoThermoOptic when it is not the entry's own and no behaviour is
+// known.
+func (e Entry) GlassAt(fraction, temperature float64) (Medium, error) {
+	const function = "materials.Entry.GlassAt"
+	if err := domain.Positive(function, "temperature", temperature, "K"); err != nil {
+		return nil, err
+	}
+	g, err := e.Glass(fraction)
+	if err != nil || temperature == e.Temperature {
+		return g, err
+	}
+	if e.ThermoOptic == nil {
+		return nil, &domain.Error{Func: function, Argument: "temperature", Value: temperature,
+			Allowed: fmt.Sprintf("%v (K) for %s", e.Temperature, e.Name), Kind: ErrNoThermoOptic}
+	}
+	if _, err := e.ThermoOptic.Change(e.anyWavelength(), e.Temperature, temperature); err != nil {
+		return nil, err
+	}
+	return Warmed{Glass: g, ThermoOptic: e.ThermoOptic, Reference: e.Temperature, Temperature: temperature}, nil
+}
+
+// anyWavelength is one within range, to try a behaviour at.
+func (e Entry) anyWavelength() float64 { return math.Sqrt(e.Wavelengths.From * e.Wavelengths.To) }
 
 // FractionForIndex returns the mole fraction at which the glass has the given
 // index at a vacuum wavelength (m), to the last place or two that the index
@@ -118,25 +149,27 @@ func Lookup(name string) (Entry, error) {
 // Catalogue returns every medium of the package, each with its ranges and its
 // source. The slice is the caller's own.
 func Catalogue() []Entry {
-	fixed := func(g Sellmeier, name, composition string) Entry {
+	room := Celsius(20)
+	fixed := func(g Sellmeier, name, composition string, behaviour ThermoOptic) Entry {
 		return Entry{Name: name, Composition: composition, Wavelengths: g.Range, Source: g.Source,
+			Temperature: room, ThermoOptic: behaviour,
 			build: func(float64) (Medium, error) { return g, nil }}
 	}
-	warm := ghoshSilica(Celsius(20))
+	silica := SilicaThermoOptic{}
 	air, pmma := Air(), PMMA()
 	all := []Entry{
-		fixed(FusedSilica(), "silica", "SiO2"),
-		fixed(SilicaByGroupIndex(), "silica-by-group-index", "SiO2"),
-		fixed(warm, "silica-with-temperature", "SiO2, at 20 C here; SilicaAt takes the temperature"),
-		fixed(Germania(), "germania", "GeO2"),
+		fixed(FusedSilica(), "silica", "SiO2", silica),
+		fixed(SilicaByGroupIndex(), "silica-by-group-index", "SiO2", silica),
+		fixed(ghoshSilica(room), "silica-with-temperature", "SiO2", silica),
+		fixed(Germania(), "germania", "GeO2", nil),
 		{Name: "germania-silica", Composition: "x GeO2 + (1 - x) SiO2", Wavelengths: Germania().Range,
-			Fractions: Range{0, 1}, Source: fleming,
+			Fractions: Range{0, 1}, Source: fleming, Temperature: room, ThermoOptic: silica,
 			build: func(x float64) (Medium, error) { return GermaniaSilica(x) }},
 		{Name: "germania-silica-by-sunak", Composition: "x GeO2 + (1 - x) SiO2", Wavelengths: sunakRange,
-			Fractions: sunakFractions, Source: sunak,
+			Fractions: sunakFractions, Source: sunak, Temperature: room, ThermoOptic: silica,
 			build: func(x float64) (Medium, error) { return GermaniaSilicaBySunak(x) }},
 		{Name: "fluorine-silica", Composition: "x F + (1 - x) SiO2", Wavelengths: sunakRange,
-			Fractions: sunakFractions, Source: sunak,
+			Fractions: sunakFractions, Source: sunak, Temperature: room, ThermoOptic: silica,
 			build: func(x float64) (Medium, error) { return FluorineSilica(x) }},
 	}
 	for _, g := range MeasuredGlasses() {
@@ -144,18 +177,24 @@ func Catalogue() []Entry {
 		if g.Fraction > 0 {
 			composition = fmt.Sprintf("%s, mole fraction %v", g.Composition, g.Fraction)
 		}
-		name := strings.ReplaceAll(g.Name, " ", "-") + "-measured"
-		all = append(all, fixed(g.Sellmeier, strings.ReplaceAll(name, "%", ""), composition))
+		name := strings.NewReplacer(" ", "-", "%", "").Replace(g.Name) + "-measured"
+		all = append(all, fixed(g.Sellmeier, name, composition, silica))
+	}
+	warmed := func(e Entry, celsius float64) Entry {
+		e.Temperature = Celsius(celsius)
+		return e
 	}
 	return append(all,
 		Entry{Name: "air", Composition: "dry air", Wavelengths: air.Range, Source: air.Source,
-			build: func(float64) (Medium, error) { return air, nil }},
-		fixed(Water(), "water", "H2O"),
+			Temperature: Celsius(15),
+			build:       func(float64) (Medium, error) { return air, nil }},
+		fixed(Water(), "water", "H2O", WaterThermoOptic()),
 		Entry{Name: "pmma", Composition: "poly(methyl methacrylate)", Wavelengths: pmma.Range, Source: pmma.Source,
+			Temperature: Celsius(20.1), ThermoOptic: PMMAThermoOptic(),
 			build: func(float64) (Medium, error) { return pmma, nil }},
-		fixed(PMMAByOscillator(), "pmma-by-oscillator", "poly(methyl methacrylate)"),
-		fixed(Polycarbonate(), "polycarbonate", "polycarbonate"),
-		fixed(FluorideGlass(), "fluoride-glass", "ZrF4-BaF2-LaF3-AlF3-NaF"),
-		fixed(ArsenicTrisulfide(), "arsenic-trisulfide", "As2S3"),
+		fixed(PMMAByOscillator(), "pmma-by-oscillator", "poly(methyl methacrylate)", PMMAThermoOptic()),
+		fixed(Polycarbonate(), "polycarbonate", "polycarbonate", nil),
+		fixed(FluorideGlass(), "fluoride-glass", "ZrF4-BaF2-LaF3-AlF3-NaF", nil),
+		warmed(fixed(ArsenicTrisulfide(), "arsenic-trisulfide", "As2S3", nil), 25),
 	)
 }

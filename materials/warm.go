@@ -71,6 +71,9 @@ func (SilicaThermoOptic) Change(wavelength, from, to float64) (taylor.Series, er
 	return n1.Sub(n0), err
 }
 
+// Wavelengths returns where Change answers (m).
+func (SilicaThermoOptic) Wavelengths() Range { return ghoshWavelengths }
+
 // Source returns where the coefficients come from.
 func (SilicaThermoOptic) Source() Source { return ghosh }
 

@@ -143,6 +143,9 @@ func cauchy(a, b *taylor.Series, k int) float64 {
 // DispersionCurve. The derivatives lose digits where b does, see SolveLP; the k-th
 // is good to about 1e-15 times w^k elsewhere.
 func (p LP) Series() taylor.Series {
+	if p.B == 0 { // underflow: so do the derivatives
+		return taylor.Series{}
+	}
 	return p.logSeries().Compose(taylor.Variable(p.V).Log())
 }
 
@@ -164,7 +167,7 @@ func (p LP) DispersionCurve() float64 {
 
 // CorePower returns the share of the mode's power that travels in the core,
 //
-//	(d(V b)/dV + b)/2 = 1 - (u^2/V^2)(1 - kappa)
+//	(d(V b)/dV + b)/2 = 1 - (u^2/V^2)(1 - kappa) = b + (u^2/V^2) kappa
 //
 // (Gloge 1971, equation 27).
 func (p LP) CorePower() float64 {
@@ -172,8 +175,7 @@ func (p LP) CorePower() float64 {
 	if g == 0 {
 		return 0
 	}
-	// 1 - kappa = (P - w^2)/P
-	big := g * (g + 2*float64(p.L))
+	kappa := p.W / g * (p.W / (g + 2*float64(p.L)))
 	u := p.U / p.V
-	return math.Min(1, 1-u*u*(big-p.W*p.W)/big)
+	return math.Min(1, p.B+u*u*kappa)
 }

@@ -238,6 +238,10 @@ func nearZero(l int, cut, d float64) float64 {
 // solveSmall solves LP01 for y = ln w^2 at small v, where w is near exp(-2/v^2).
 func (p *LP) solveSmall() {
 	v := p.V
+	if v < 0.05 { // w is below the smallest float64
+		p.U = v
+		return
+	}
 	// 1/x = -J_0/(u J_1) = -2/s + 1/4 + s/96 + ..., s = u^2 (power series division of
 	// DLMF 10.2.2).
 	inverse := func(s float64) float64 { return -2/s + lessPole(s) }

@@ -212,9 +212,10 @@ func (m StepLP) Parts(wavelength float64) (material, waveguide taylor.Series, er
 
 // CutoffWavelength returns the vacuum wavelength (m) between from and to above which
 // the mode is no longer guided, with the glasses' dispersion: V at it is the mode's
-// cut-off. If there are several (glasses whose indices cross) it is the longest. The
-// error matches ErrNoCutoff when there is none in the range; LP01 has none at all.
-// Both glasses must answer over the whole range.
+// cut-off. If there are several (glasses whose indices cross) it is the longest; a
+// wavelength above which the mode begins to be guided does not count. The error
+// matches ErrNoCutoff when there is none in the range; LP01 has none at all. Both
+// glasses must answer over the whole range.
 func (m StepLP) CutoffWavelength(from, to float64) (float64, error) {
 	const function = "modes.StepLP.CutoffWavelength"
 	if err := checkLabel(function, m.L, m.M); err != nil {
@@ -245,10 +246,16 @@ func (m StepLP) CutoffWavelength(from, to float64) (float64, error) {
 	if err != nil {
 		return 0, err
 	}
-	if len(zeros) == 0 {
-		return 0, fmt.Errorf("%s: %v from %v m to %v m: %w", function, m, from, to, ErrNoCutoff)
+	for i := len(zeros) - 1; i >= 0; i-- {
+		_, slope, err := excess(zeros[i])
+		if err != nil {
+			return 0, err
+		}
+		if slope < 0 {
+			return zeros[i], nil
+		}
 	}
-	return zeros[len(zeros)-1], nil
+	return 0, fmt.Errorf("%s: %v from %v m to %v m: %w", function, m, from, to, ErrNoCutoff)
 }
 
 func checkSpan(function string, from, to float64) error {

@@ -25,7 +25,7 @@ func (c Core) check(function string) error {
 	if c.Alpha > 0 {
 		return nil
 	}
-	return profile(function, c.Alpha)
+	return &domain.Error{Func: function, Argument: "Core.Alpha", Value: c.Alpha, Allowed: alphaAllowed}
 }
 
 func (c Core) step() bool { return c.Alpha > math.MaxFloat64 }

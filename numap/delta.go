@@ -48,10 +48,6 @@ func NAWeak(core, delta float64) (float64, error) {
 	if !(delta < 0.5) {
 		return 0, &domain.Error{Func: name, Argument: "delta", Value: delta, Allowed: "above 0 and below 0.5"}
 	}
-	// 2 delta may be denormal, but 4^n delta is not and has an exact root of 4^n.
-	if delta < 1e-290 {
-		return core * (math.Sqrt(delta*0x1p201) * 0x1p-100), nil
-	}
 	return core * math.Sqrt(2*delta), nil
 }
 

@@ -68,5 +68,7 @@ func profile(function string, alpha float64) error {
 	if alpha > 0 {
 		return nil
 	}
-	return &domain.Error{Func: function, Argument: "alpha", Value: alpha, Allowed: "above 0; +Inf is the step"}
+	return &domain.Error{Func: function, Argument: "alpha", Value: alpha, Allowed: alphaAllowed}
 }
+
+const alphaAllowed = "above 0; +Inf is the step"

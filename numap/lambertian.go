@@ -106,7 +106,7 @@ func CosineShare(na, order, outside float64) (float64, error) {
 
 // CosineOrder returns the order m of a source with intensity proportional to cos^m
 // that has half its axial intensity at the given angle (rad) from the axis, above 0
-// and below pi/2: -ln 2 / ln cos(halfAngle) (Keiser, chapter 4, where a lateral
+// and below pi/2: -ln 2 / ln cos(halfAngle) (Keiser, chapter 5, where a lateral
 // coefficient describes a laser diode). 60 degrees gives 1, the Lambertian source.
 func CosineOrder(halfAngle float64) (float64, error) {
 	const name = "numap.CosineOrder"

@@ -42,7 +42,10 @@ func modeCount(name string, v, alpha float64) (float64, error) {
 // The g-th group holds 2 g modes. A parabola has V/2 groups. For alpha = +Inf, the
 // step, the number is formal: its modes do not fall into groups.
 func PowerLawModeGroups(v, alpha float64) (float64, error) {
-	const name = "numap.PowerLawModeGroups"
+	return modeGroups("numap.PowerLawModeGroups", v, alpha)
+}
+
+func modeGroups(name string, v, alpha float64) (float64, error) {
 	if err := domain.Positive(name, "v", v, ""); err != nil {
 		return 0, err
 	}
@@ -64,9 +67,8 @@ func PowerLawGroupB(group, v, alpha float64) (float64, error) {
 	if err := domain.NonNegative(name, "group", group, ""); err != nil {
 		return 0, err
 	}
-	groups, err := PowerLawModeGroups(v, alpha)
+	groups, err := modeGroups(name, v, alpha)
 	if err != nil {
-		err.(*domain.Error).Func = name
 		return 0, err
 	}
 	if group > groups {

@@ -208,7 +208,7 @@ func TestRefusals(t *testing.T) {
 		{"numap.PowerLawGroupB", "alpha", nil, func() (float64, error) { return PowerLawGroupB(1, 10, 0) }},
 		{"numap.PowerLawGroupB", "group", ErrNotGuiding, func() (float64, error) { return PowerLawGroupB(6, 10, 2) }},
 		{"numap.Core.LocalNA", "Core.NA", nil, func() (float64, error) { return Core{1, 0, 2}.LocalNA(0) }},
-		{"numap.Core.LocalNA", "alpha", nil, func() (float64, error) { return Core{1, 0.1, 0}.LocalNA(0) }},
+		{"numap.Core.LocalNA", "Core.Alpha", nil, func() (float64, error) { return Core{1, 0.1, 0}.LocalNA(0) }},
 		{"numap.Core.LocalNA", "r", nil, func() (float64, error) { return core.LocalNA(-1e-6) }},
 		{"numap.Core.LambertianShare", "Core.Radius", nil, func() (float64, error) { return Core{}.LambertianShare(0, 1) }},
 		{"numap.Core.LambertianShare", "source", nil, func() (float64, error) { return core.LambertianShare(-1, 1) }},

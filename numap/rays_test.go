@@ -117,7 +117,7 @@ func TestRayCount(t *testing.T) {
 }
 
 // The kinds of ray by their definition through the invariants (Snyder and Love 1983,
-// table 2-1), where these are far enough apart for float64.
+// chapter 2), where these are far enough apart for float64.
 func TestRayKindByInvariants(t *testing.T) {
 	const cladding = 1.444
 	seen := map[RayKind]int{}

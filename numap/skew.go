@@ -73,7 +73,7 @@ func (k RayKind) String() string {
 }
 
 // RayKind tells bound, tunnelling (also called leaky) and refracting rays apart
-// (Snyder and Love 1983, tables 2-1 and 2-3, in terms of the ray invariants beta and
+// (Snyder and Love 1983, chapter 2, in terms of the ray invariants beta and
 // l). A ray exactly at the local acceptance angle counts as bound. The comparison
 // is made on transverse components, so a small index difference costs no accuracy.
 func (c Core) RayKind(ray Ray) (RayKind, error) {
@@ -96,7 +96,7 @@ func (c Core) RayKind(ray Ray) (RayKind, error) {
 
 // Invariants returns the two numbers that a ray keeps all along a core in a cladding
 // of index n2 > 0: beta = n(r) cos(theta) and l = (r/a) n(r) sin(theta) sin(gamma),
-// theta in the core (Snyder and Love 1983, eqs. 2-4 and 2-5, whose azimuthal angle is
+// theta in the core (Snyder and Love 1983, chapter 2, whose azimuthal angle is
 // pi/2 - gamma). A Transverse above n(r) belongs to no ray and gives an error.
 func (c Core) Invariants(ray Ray, cladding float64) (beta, l float64, err error) {
 	const name = "numap.Core.Invariants"

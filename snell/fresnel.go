@@ -19,7 +19,7 @@ import "glassthread/materials/domain"
 //
 // Beyond the critical angle the reflection has modulus 1 and TotalReflectionPhase
 // gives its argument; the transmission is then the evanescent field at the
-// interface. Transmittance is the power that enters the second medium through
+// interface, and no power goes with it. Transmittance is the power that enters the second medium through
 // the interface, also where it is absorbed further on, so that Reflectance +
 // Transmittance is 1 and Absorptance 0. The first medium is lossless because in
 // an absorbing one the incident and the reflected power do not separate.

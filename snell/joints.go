@@ -34,7 +34,8 @@ func face(n1, n2 float64) Powers {
 // which leaves out the light that spreads sideways in the gap.
 type Joint struct{ First, Filling, Second float64 }
 
-// AirGap returns the joint of two fibres with nothing but air (index 1) between.
+// AirGap returns the joint of two fibres with nothing but air between, its index
+// taken as 1. A Joint takes any other, such as that of air at its own density.
 func AirGap(first, second float64) Joint { return Joint{first, 1, second} }
 
 // Coherent returns the powers of the joint with a gap (m, at least 0) at a vacuum

@@ -6,6 +6,7 @@ import (
 	"math"
 	"math/cmplx"
 	"os"
+	"slices"
 	"strconv"
 	"strings"
 	"testing"
@@ -64,24 +65,36 @@ func relative(got, want complex128) float64 {
 // absolute returns |got - want| in units of epsilon.
 func absolute(got, want complex128) float64 { return cmplx.Abs(got-want) / epsilon }
 
-// worst keeps the largest error seen under each name.
-type worst map[string]float64
+// tally collects the errors seen under each name.
+type tally map[string][]float64
 
-func (w worst) see(name string, err float64) { w[name] = math.Max(w[name], err) }
+func (e tally) see(name string, err float64) { e[name] = append(e[name], err) }
 
-func (w worst) check(t *testing.T, name string, limit float64) {
+// check holds the worst error against a limit: one for testdata/reference.csv,
+// one for a sweep of random cases read instead.
+func (e tally) check(t *testing.T, name string, corners, sweep float64) {
 	t.Helper()
-	assert.Contains(t, w, name)
-	assert.LessOrEqual(t, w[name], limit, name)
-	t.Logf("%-34s worst %8.2f of 2^-53, limit %g", name, w[name], limit)
+	if !assert.NotEmpty(t, e[name], name) {
+		return
+	}
+	mean := 0.0
+	for _, err := range e[name] {
+		mean += err / float64(len(e[name]))
+	}
+	worst, limit := slices.Max(e[name]), corners
+	if flag.Lookup("reference").DefValue != *referenceFile {
+		limit = sweep
+	}
+	assert.LessOrEqual(t, worst, limit, name)
+	t.Logf("%-26s %6d cases, mean %5.2f, worst %6.2f of 2^-53", name, len(e[name]), mean, worst)
 }
 
 // Arbitrary precision (mpmath) at exact float64 inputs, among them angles within
 // 1e-8 to 4e-16 of critical, grazing angles, indices that differ in the tenth or
-// the last digit, metals, and films of a millimetre. The limits are those that
-// the package documentation states.
+// the last digit, metals, and films of a millimetre. The package documentation
+// states what the sweep of 8,000 rows a kind gave.
 func TestReference(t *testing.T) {
-	w := worst{}
+	w := tally{}
 	for _, c := range references(t) {
 		in, want := c.in, c.results
 		z := func(k int) complex128 { return complex(want[k], want[k+1]) }
@@ -147,17 +160,17 @@ func TestReference(t *testing.T) {
 			t.Fatal("unknown kind ", c.kind)
 		}
 	}
-	w.check(t, "critical", 1)
-	w.check(t, "refract", 4)
-	w.check(t, "total: phases", 10)
-	w.check(t, "total: depth and shifts", 10)
-	w.check(t, "fresnel: amplitudes", 12)
-	w.check(t, "fresnel: powers", 12)
-	w.check(t, "stack: reflection", 25)
-	w.check(t, "stack: reflectance", 50)
-	w.check(t, "stack: transmission", 25)
-	w.check(t, "stack: transmittance", 50)
-	w.check(t, "stack: absorptance, of 1", 25)
+	w.check(t, "critical", 1, 1)
+	w.check(t, "refract", 2, 4)
+	w.check(t, "total: phases", 5, 8)
+	w.check(t, "total: depth and shifts", 6, 15)
+	w.check(t, "fresnel: amplitudes", 9, 14)
+	w.check(t, "fresnel: powers", 10, 27)
+	w.check(t, "stack: reflection", 6, 100)
+	w.check(t, "stack: reflectance", 6, 100)
+	w.check(t, "stack: transmission", 6, 200)
+	w.check(t, "stack: transmittance", 8, 200)
+	w.check(t, "stack: absorptance, of 1", 2, 20)
 }
 
 // scales returns the sum of |2 pi thickness kz/wavelength| of the films, and for

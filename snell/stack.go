@@ -34,10 +34,10 @@ type Stack struct {
 //
 // The method is that of characteristic matrices (F. Abeles, Ann. Phys. (Paris)
 // 12, 596 (1950); Born and Wolf, section 1.6), applied from the last film to the
-// first to the transverse fields B and C and to C - admittance B, each freed of its growing
-// exponential, so that no thickness overflows and a film of nearly the entrance
-// index keeps the digits of its weak reflection. A phase of 2 pi thickness
-// kz/wavelength carries a rounding error of its own size times 2e-16.
+// first to the transverse fields B and C, and to their excess C - B times the
+// entrance admittance. Each is freed of its growing exponential, so that no
+// thickness overflows, and a film of nearly the entrance index keeps the digits
+// of its weak reflection.
 func (s Stack) At(wavelength, incidence float64) (Coefficients, error) {
 	const function = "snell.Stack.At"
 	if err := s.check(function, wavelength, incidence); err != nil {

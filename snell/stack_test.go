@@ -128,6 +128,17 @@ func TestThickAbsorbingFilm(t *testing.T) {
 	}
 }
 
+// Power falls as exp(-4 pi kappa z/wavelength) (P. Bouguer's law, and the meaning
+// of the index's imaginary part; Born and Wolf, section 14.1): the ratio of two
+// thick films, whose faces cancel out of it.
+func TestBouguerLaw(t *testing.T) {
+	const kappa, wavelength = 0.3, 1e-6
+	through := func(h float64) float64 {
+		return must(Stack{1, []Film{{1.5 + kappa*1i, h}}, 1.5}.At(wavelength, 0)).S.Transmittance
+	}
+	assert.InEpsilon(t, math.Exp(-4*math.Pi*kappa), through(11e-6)/through(10e-6), 1e-13)
+}
+
 // What must change nothing: no film, films of no thickness, a film cut in two, a
 // half wave at its wavelength, a film of the entrance medium (but for phase).
 func TestStackIdentities(t *testing.T) {

@@ -96,7 +96,8 @@ func TestLateralShiftIsPhaseDerivative(t *testing.T) {
 			assert.InEpsilon(t, s.Along*math.Cos(angle), s.Beam, 1e-14)
 			assert.InEpsilon(t, p.Along*math.Cos(angle), p.Beam, 1e-14)
 		}
-		// Near the critical angle the two differ by 1/sin^2 = (n1/n2)^2 (Artmann 1948).
+		// Near the critical angle the two differ by 1/sin^2 = (n1/n2)^2 (Artmann 1948, from
+		// memory).
 		s, p, err := LateralShift(n[0], n[1], critical+1e-11, wavelength)
 		require.NoError(t, err)
 		assert.InEpsilon(t, n[0]*n[0]/(n[1]*n[1]), p.Beam/s.Beam, 1e-8)

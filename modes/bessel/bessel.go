@@ -51,8 +51,8 @@ func checkOrder(function string, order int) error {
 
 // J returns J_l(x). Its error is an absolute one, a few units of 1e-16 times the
 // larger of |J_l(x)| and the amplitude sqrt(2/(pi x)) in the oscillating range;
-// below the turning point x = l it is relative. It underflows to 0 for x far
-// below l.
+// below the turning point x = l it is relative, growing like the square root of l. It
+// underflows to 0 for x far below l.
 func J(l int, x float64) (float64, error) {
 	if err := check("bessel.J", l, x); err != nil {
 		return 0, err
@@ -61,7 +61,35 @@ func J(l int, x float64) (float64, error) {
 		_, j := jPair(l, x)
 		return j, nil
 	}
-	return math.Jn(l, x), nil
+	return jBelow(l, x), nil
+}
+
+// jBelow returns J_l(x) for x <= l by recurrence towards lower orders, which is stable
+// there (J. C. P. Miller's method, DLMF 3.6(ii)), with the scale from J_0 or J_1,
+// whichever is larger: next to a zero of the one, where package math's Jn loses every
+// digit, the other is near its extremum.
+func jBelow(l int, x float64) float64 {
+	if x < 0x1p-27 { // (x/2)^l/l!; the next term is below half a unit in the last place
+		j := 1.0
+		for k := 1; k <= l && j > 0; k++ {
+			j *= x / (2 * float64(k))
+		}
+		return j
+	}
+	above, at := jFraction(l, x), 1.0
+	exponent := 0
+	for k := l; k > 0; k-- {
+		above, at = at, 2*float64(k)/x*at-above
+		if math.Abs(at) > 0x1p500 {
+			above, at = above*0x1p-500, at*0x1p-500
+			exponent -= 500
+		}
+	}
+	j := math.J0(x) / at
+	if math.Abs(above) > math.Abs(at) {
+		j = math.J1(x) / above
+	}
+	return math.Ldexp(j, exponent)
 }
 
 // JPair returns J_{l-1}(x) and J_l(x), with J_{-1} = -J_1, for x above l. Their errors

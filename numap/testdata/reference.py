@@ -3,8 +3,8 @@
 # doubles, taken at their exact values. Needs python3-mpmath.
 import random
 
-from mpmath import (mp, mpf, sqrt, pi, asin, acos, cos, sin, log, exp, quad, besseljzero,
-                    hypot, inf, nstr)
+from mpmath import (mp, mpf, sqrt, pi, asin, cos, sin, log, exp, quad, besseljzero,
+                    inf, nstr)
 
 mp.dps = 50
 INF = float("inf")
