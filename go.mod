@@ -7,4 +7,5 @@ require github.com/stretchr/testify v1.12.1
 require (
 	github.com/scientificgo/special v0.0.2 // indirect
 	go.yaml.in/yaml/v3 v3.0.5 // indirect
+	gonum.org/v1/gonum v0.17.0 // indirect
 )

@@ -16,7 +16,8 @@
 //
 // Like package math, the operations return no error: a quotient by zero, the
 // logarithm or root of a negative value, and overflow give infinities and NaNs
-// that flow through to the result, where one call of Finite finds them.
+// that flow on by the rules of IEEE 754, so that one call of Finite on the result
+// finds them, except where an infinity is divided by or raised away into a zero.
 package taylor
 
 import "math"
