@@ -51,7 +51,8 @@ func (e Entry) Glass(fraction float64) (Medium, error) {
 }
 
 // GlassAt returns the medium of the given mole fraction at a temperature (K), by the
-// entry's ThermoOptic, which for doped silica is that of pure silica. The error matches ErrRange when the temperature is out of
+// entry's ThermoOptic, which for doped silica is that of pure silica and answers from
+// 0.23 to 3.37 um only. The error matches ErrRange when the temperature is out of
 // range, and ErrNoThermoOptic when it is not the entry's own and no behaviour is
 // known.
 func (e Entry) GlassAt(fraction, temperature float64) (Medium, error) {
@@ -102,6 +103,9 @@ func (e Entry) FractionForDelta(delta, wavelength float64) (float64, error) {
 // fraction solves for the composition at which miss is zero; the index is a
 // monotonic function of the fraction for every family of the catalogue.
 func (e Entry) fraction(function, argument string, wanted, wavelength float64, miss func(n, n0 float64) float64) (float64, error) {
+	if e.build == nil {
+		return 0, fmt.Errorf("%s: the entry is empty: %w", function, ErrUnknown)
+	}
 	if e.Fractions == (Range{}) {
 		return 0, fmt.Errorf("%s: the composition of %q is fixed: %w", function, e.Name, ErrNoFraction)
 	}

@@ -13,9 +13,9 @@ import (
 //
 // The zero Gas is vacuum.
 type Gas struct {
-	Name   string         // what the gas is
-	Terms  [maxTerms]Term // A: pure number, L: resonance wavelength (m)
-	Range  Range          // vacuum wavelengths (m) over which the fit holds
+	Name   string  // what the gas is
+	Terms  [6]Term // A: pure number, L: resonance wavelength (m)
+	Range  Range   // vacuum wavelengths (m) over which the fit holds
 	Source Source
 }
 
@@ -32,6 +32,13 @@ func (g Gas) Taylor(wavelength float64) (taylor.Series, error) {
 	return n, checkSeries(n, wavelength)
 }
 
+// Extrapolate returns the same gas with the range of wavelengths (m) that the
+// caller answers for. The data do not vouch for anything outside Range.
+func (g Gas) Extrapolate(wavelengths Range) Gas {
+	g.Range = wavelengths
+	return g
+}
+
 // Air returns dry air at 15 C and 101.325 kPa with 450 ppm of CO2, 0.23 to
 // 1.69 um (P. E. Ciddor, Appl. Opt. 35, 1566, 1996).
 func Air() Gas {
@@ -39,7 +46,7 @@ func Air() Gas {
 	const d1, d2 = 238.0185, 57.362
 	return Gas{
 		Name: "air",
-		Terms: [maxTerms]Term{
+		Terms: [6]Term{
 			{0.05792105 / d1, micrometre / math.Sqrt(d1)},
 			{0.00167917 / d2, micrometre / math.Sqrt(d2)},
 		},

@@ -13,9 +13,9 @@ import (
 //
 // The zero LorentzLorenz is vacuum.
 type LorentzLorenz struct {
-	Name   string         // what the glass is
-	Terms  [maxTerms]Term // A: pure number, L: resonance wavelength (m)
-	Range  Range          // vacuum wavelengths (m) over which the fit holds
+	Name   string  // what the glass is
+	Terms  [6]Term // A: pure number, L: resonance wavelength (m)
+	Range  Range   // vacuum wavelengths (m) over which the fit holds
 	Source Source
 }
 

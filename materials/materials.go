@@ -43,7 +43,10 @@ var errNoMedium = errors.New("materials: the medium is nil")
 // Index returns the refractive index of m at a vacuum wavelength (m).
 func Index(m Medium, wavelength float64) (float64, error) {
 	s, err := series(m, wavelength)
-	return s[0], err
+	if err != nil {
+		return 0, err
+	}
+	return s[0], nil
 }
 
 // GroupIndex returns the group index N = n - wavelength dn/dwavelength of m at a

@@ -19,7 +19,9 @@ type MeasuredGlass struct {
 // 5432 (1973): quenched silica, and silica doped with germania, phosphorus
 // pentoxide, boron trioxide or fluorine. The coefficients are from memory. They
 // were measured on different samples, so that a trend over composition is better
-// taken from GermaniaSilica or FluorineSilica.
+// taken from GermaniaSilica or FluorineSilica. They also show how far sources part:
+// the glass with 0.01 of fluorine lies 4.6e-3 below silica in index at 1.55 um, where
+// FluorineSilica says 2.4e-3.
 func MeasuredGlasses() []MeasuredGlass {
 	source := Source{
 		Citation:   "J. W. Fleming, J. Am. Ceram. Soc. 59, 503 (1976) and Electron. Lett. 14, 326 (1978); S. H. Wemple et al., J. Appl. Phys. 44, 5432 (1973); as collected in M. J. Adams, An Introduction to Optical Waveguides (Wiley, 1981)",
@@ -30,7 +32,7 @@ func MeasuredGlasses() []MeasuredGlass {
 		return MeasuredGlass{
 			Sellmeier: Sellmeier{
 				Name: name,
-				Terms: [maxTerms]Term{
+				Terms: [6]Term{
 					{a1, l1 * micrometre}, {a2, l2 * micrometre}, {a3, l3 * micrometre},
 				},
 				Range:  measuredRange,

@@ -6,9 +6,6 @@ import "glassthread/materials/taylor"
 // pure number A (its strength) and the resonance wavelength L in metres.
 type Term struct{ A, L float64 }
 
-// maxTerms is the most oscillators a formula has here (As2S3 has five).
-const maxTerms = 6
-
 // oscillators returns the series of the sum of A x^2/(x^2 - L^2) about x.
 //
 // The k-th coefficient of one term for k >= 1 is, by partial fractions,
@@ -18,7 +15,7 @@ const maxTerms = 6
 //
 // and p_k is a sum of positive terms: no cancellation within a term, and near a
 // resonance x^2 - L^2 is formed as a product.
-func oscillators(terms *[maxTerms]Term, x float64) taylor.Series {
+func oscillators(terms *[6]Term, x float64) taylor.Series {
 	var s taylor.Series
 	x2 := x * x
 	for i := range terms {

@@ -53,6 +53,13 @@ func (g Powers) Taylor(wavelength float64) (taylor.Series, error) {
 	return n, checkSeries(n, wavelength)
 }
 
+// Extrapolate returns the same medium with the range of wavelengths (m) that the
+// caller answers for. The data do not vouch for anything outside Range.
+func (g Powers) Extrapolate(wavelengths Range) Powers {
+	g.Range = wavelengths
+	return g
+}
+
 // PMMA returns poly(methyl methacrylate) at 20 C, 0.42 to 1.62 um (G. Beadie et
 // al., Appl. Opt. 54, F139, 2015; index to 2e-4).
 func PMMA() Powers {

@@ -128,10 +128,10 @@ func TestAgainstTable(t *testing.T) {
 		t.Logf("%-16s %3d rows; index: mean %.1e, worst %.1e; D: mean %.1e, worst %.1e",
 			name, e.index.N, e.index.Mean, e.index.Worst, e.d.Mean, e.d.Worst)
 	}
-	require.Len(t, order, 15+len(MeasuredGlasses())-1) // the quenched silica is among both
+	require.Len(t, order, 14+len(MeasuredGlasses()))
 	index.Check(t, "index", 4e-16)
 	group.Check(t, "group index", 5e-16)
-	plain.Check(t, "D itself, away from its zero", 1e-13)
+	plain.Check(t, "D itself, away from its zero", 3e-14)
 	oscillators.d.Check(t, "D over |D| + x|S|", 6e-16)
 	oscillators.slope.Check(t, "slope over its terms", 3e-15)
 	oscillators.beta2.Check(t, "beta2 over its terms", 1e-15)
@@ -141,5 +141,5 @@ func TestAgainstTable(t *testing.T) {
 	powers.slope.Check(t, "slope of a sum of powers", 2e-14)
 	powers.beta2.Check(t, "beta2 of a sum of powers", 2e-15)
 	powers.beta3.Check(t, "beta3 of a sum of powers", 1e-14)
-	powers.beta4.Check(t, "beta4 of a sum of powers", 1e-14)
+	powers.beta4.Check(t, "beta4 of a sum of powers", 5e-15)
 }

@@ -16,10 +16,10 @@ import (
 // one unit in the last place of what the coefficients say; how well those
 // describe the glass is the Source's to tell.
 type Sellmeier struct {
-	Name   string         // what the glass is
-	Offset float64        // pure number
-	Terms  [maxTerms]Term // A: pure number, L: resonance wavelength (m)
-	Range  Range          // vacuum wavelengths (m) over which the fit holds
+	Name   string  // what the glass is
+	Offset float64 // pure number
+	Terms  [6]Term // A: pure number, L: resonance wavelength (m)
+	Range  Range   // vacuum wavelengths (m) over which the fit holds
 	Source Source
 }
 

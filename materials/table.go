@@ -2,6 +2,7 @@ package materials
 
 import (
 	"errors"
+	"fmt"
 	"sort"
 
 	"glassthread/materials/domain"
@@ -45,15 +46,16 @@ func NewTable(wavelengths, indices []float64, source Source) (Table, error) {
 			Allowed: "at least 6"}
 	}
 	for i, x := range wavelengths {
-		if err := domain.Positive(function, "wavelengths", x, "m"); err != nil {
-			return Table{}, err
+		at := func(name string) string { return fmt.Sprintf("%s[%d]", name, i) }
+		if domain.Positive(function, "wavelengths", x, "m") != nil {
+			return Table{}, domain.Positive(function, at("wavelengths"), x, "m")
 		}
 		if i > 0 && x <= wavelengths[i-1] {
-			return Table{}, &domain.Error{Func: function, Argument: "wavelengths", Value: x,
+			return Table{}, &domain.Error{Func: function, Argument: at("wavelengths"), Value: x,
 				Allowed: "above the one before (m)"}
 		}
-		if err := domain.Positive(function, "indices", indices[i], ""); err != nil {
-			return Table{}, err
+		if domain.Positive(function, "indices", indices[i], "") != nil {
+			return Table{}, domain.Positive(function, at("indices"), indices[i], "")
 		}
 	}
 	t := Table{knots: notAKnot(wavelengths), source: source}
@@ -93,8 +95,8 @@ func (t Table) Taylor(wavelength float64) (taylor.Series, error) {
 	return n, checkSeries(n, wavelength)
 }
 
-// notAKnot returns the knots of the spline: the data's abscissas without the three
-// next to each end but one, and each end degree+1 times (C. de Boor, A Practical
+// notAKnot returns the knots of the spline: the data's abscissas without the two
+// next to each end, and each end degree+1 times (C. de Boor, A Practical
 // Guide to Splines, rev. ed. 2001, chapter XIII).
 func notAKnot(x []float64) []float64 {
 	n := len(x)

@@ -81,7 +81,7 @@ func (SilicaThermoOptic) Source() Source { return ghosh }
 //
 //	change of n = First (T2 - T1) + Second ((T2 - About)^2 - (T1 - About)^2).
 //
-// The zero LinearThermoOptic changes nothing at any temperature.
+// The zero LinearThermoOptic changes nothing at any temperature above 0 K.
 type LinearThermoOptic struct {
 	First        float64 // dn/dT at the temperature About (1/K)
 	Second       float64 // half of d2n/dT2 (1/K^2)
@@ -103,8 +103,18 @@ func (l LinearThermoOptic) Change(wavelength, from, to float64) (taylor.Series, 
 	if err := l.Temperatures.check(function, "to", to, "K"); err != nil {
 		return taylor.Series{}, err
 	}
-	step := to - from
-	change := step * (l.First + l.Second*((to-l.About)+(from-l.About)))
+	// A range need not be stated, but a temperature must: 0 K is one forgotten.
+	if err := domain.Positive(function, "from", from, "K"); err != nil {
+		return taylor.Series{}, err
+	}
+	if err := domain.Positive(function, "to", to, "K"); err != nil {
+		return taylor.Series{}, err
+	}
+	slope := l.First
+	if l.Second != 0 {
+		slope += l.Second * ((to - l.About) + (from - l.About))
+	}
+	change := (to - from) * slope
 	return taylor.Constant(change), domain.Result(function, "index change", change)
 }
 
@@ -126,7 +136,7 @@ func PMMAThermoOptic() LinearThermoOptic {
 // WaterThermoOptic returns the behaviour of water from 0 to 30 C: dn/dT = -8.9e-5
 // per K at 20 C, falling by 3.7e-6 per K for each kelvin. It is the parabola
 // through the indices 1.33369, 1.33299 and 1.33192 at 10, 20 and 30 C and 589 nm
-// of the CRC Handbook of Chemistry and Physics (from memory), and is 8e-5 off its
+// of the CRC Handbook of Chemistry and Physics (from memory), and is 7e-5 off its
 // 1.33395 at 0 C.
 func WaterThermoOptic() LinearThermoOptic {
 	return LinearThermoOptic{
