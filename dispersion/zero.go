@@ -34,7 +34,8 @@ func ZeroDispersion(m materials.Medium, from, to float64) (float64, error) {
 
 // ZeroDispersions returns every vacuum wavelength (m) between from and to at which D is
 // zero, in rising order; none is an empty list and no error. Dispersion-flattened
-// fibres have two or three.
+// fibres have two or three. A medium with no dispersion at all, such as
+// materials.Constant, has no zero to name.
 func ZeroDispersions(m materials.Medium, from, to float64) ([]float64, error) {
 	const function = "dispersion.ZeroDispersions"
 	if err := domain.Positive(function, "from", from, "m"); err != nil {
@@ -47,8 +48,14 @@ func ZeroDispersions(m materials.Medium, from, to float64) ([]float64, error) {
 		return nil, &domain.Error{Func: function, Argument: "to", Value: to,
 			Allowed: fmt.Sprintf("above from = %v (m)", from)}
 	}
-	return root.All(func(x float64) (float64, float64, error) {
+	disperses := false
+	zeros, err := root.All(func(x float64) (float64, float64, error) {
 		r, err := At(m, x)
+		disperses = disperses || r.D != 0
 		return r.D, r.Slope, err
 	}, from, to, zeroCells)
+	if !disperses {
+		return nil, err
+	}
+	return zeros, err
 }

@@ -25,10 +25,11 @@ func (p LP) logSeries() taylor.Series {
 
 // logSeries0 serves l = 0: with G = w K_1/K_0, kappa is q/G^2 and
 //
-//	dG/dt = (G^2 - q)(1 + u^2/G^2),   q = w^2.
+//	dG/dt = (G^2 - q)(1 + u^2/G^2),   q = w^2,
+//	du^2/dt = 2 u^2 (G^2 - q)/G^2.
 func (p LP) logSeries0() taylor.Series {
 	b := taylor.Series{p.B}
-	var g, q, s, y, square, v2 taylor.Series
+	var g, q, s, y, square, excess, rest, v2 taylor.Series
 	v2[0] = p.V * p.V
 	g[0] = decay(0, p.W)
 	q[0] = p.W * p.W
@@ -37,20 +38,18 @@ func (p LP) logSeries0() taylor.Series {
 		if k > 0 {
 			v2[k] = v2[k-1] * 2 / float64(k) // V^2 e^(2t)
 			q[k] = cauchy(&v2, &b, k)
-			s[k] = v2[k] - q[k]
 		}
 		if k == taylor.Order {
 			return b
 		}
-		square[k] = cauchy(&g, &g, k)
-		quotient(&y, &s, &square, k)
 		n := float64(k + 1)
+		square[k] = cauchy(&g, &g, k)
+		excess[k] = square[k] - q[k]
+		quotient(&y, &s, &square, k)
+		quotient(&rest, &excess, &square, k)
 		b[k+1] = 2 / n * cauchy(&b, &y, k)
-		rise := square[k] - q[k]
-		for j := 0; j <= k; j++ {
-			rise += (square[j] - q[j]) * y[k-j]
-		}
-		g[k+1] = rise / n
+		s[k+1] = 2 / n * cauchy(&s, &rest, k)
+		g[k+1] = (excess[k] + cauchy(&excess, &y, k)) / n
 	}
 }
 
@@ -68,12 +67,14 @@ const chainDepth = taylor.Order
 func (p LP) logSeriesChain() taylor.Series {
 	depth := 0
 	if p.W < 2*float64(p.L) {
-		depth = min(p.L-1, chainDepth)
+		depth = max(0, min(p.L-1, chainDepth)) // 0 also for an L below 0, which no mode has
 	}
 	first := p.L - depth
 	var c [chainDepth + 1]taylor.Series // c[i] is of order first + i
 	var q, kappa, rest, over, v2 taylor.Series
 	b := taylor.Series{p.B}
+	u := p.U / p.V
+	less := taylor.Series{u * u} // 1 - b, which b has few digits of at large V
 	v2[0] = p.V * p.V
 	q[0] = p.W * p.W
 	c[0][0] = decay(first, p.W) / q[0]
@@ -114,7 +115,8 @@ func (p LP) logSeriesChain() taylor.Series {
 			}
 		}
 		quotient(&kappa, &one, &d, k)
-		b[k+1] = 2 / float64(k+1) * (kappa[k] - cauchy(&kappa, &b, k))
+		b[k+1] = 2 / float64(k+1) * cauchy(&kappa, &less, k)
+		less[k+1] = -b[k+1]
 	}
 }
 

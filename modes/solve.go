@@ -59,39 +59,28 @@ func (p *LP) setW(w float64) {
 	p.B = (w / p.V) * (w / p.V)
 }
 
-// solvePhase solves for u between cut and end by Newton's method on the phase
+// solvePhase solves for u between cut and end by Halley's method on the phase
 //
 //	atan(x/u) + atan(G/u) = atan((u J_{l-1} + G J_l)/(u J_l - G J_{l-1})),
 //
 // which has no poles and is nearly linear in u.
 func (p *LP) solvePhase(cut, end float64) {
-	v, l := p.V, float64(p.L)
+	v := p.V
 	low, high := cut, math.Min(end, v)
 	u := p.guessU(cut)
 	if !(u > low && u < high) {
 		u = (low + high) / 2
 	}
 	for pass := 0; ; pass++ {
-		q := (v - u) * (v + u)
-		g := decay(p.L, math.Sqrt(q))
-		below, at, _ := bessel.JPair(p.L, u) // u exceeds l, see the zeros
-		phase := math.Atan((u*below + g*at) / (u*at - g*below))
+		phase, step := p.phaseStep(u)
 		if phase > 0 {
 			low = u
 		} else {
 			high = u
 		}
-		p2 := g * (g + 2*l)
-		slope := -1 + (2*l-1)*below*at/(u*(at*at+below*below)) -
-			(u*u*(p2-q)/q+g)/(u*u+g*g)
-		step := phase / slope
-		if math.Abs(step) < 1e-9 || pass == maxPasses {
-			// The error left is of the order of the step squared. V - u is formed
-			// before u is rounded.
-			rest := (v - u) + step
-			p.W = math.Sqrt(rest * (v + (u - step)))
-			p.U = u - step
-			p.B = (rest / v) * ((v + p.U) / v)
+		// The error left is of the order of the step cubed.
+		if math.Abs(step) < 4e-6 || pass == maxPasses {
+			p.setU(u, step)
 			return
 		}
 		u -= step
@@ -99,6 +88,41 @@ func (p *LP) solvePhase(cut, end float64) {
 			u = (low + high) / 2
 		}
 	}
+}
+
+// setU completes the mode from a trial u and the last step; V - u is formed before u
+// is rounded.
+func (p *LP) setU(u, step float64) {
+	v := p.V
+	rest := (v - u) + step
+	p.U = u - step
+	p.W = math.Sqrt(rest * (v + p.U))
+	p.B = (rest / v) * ((v + p.U) / v)
+}
+
+// phaseStep returns the phase at u, which falls with u and vanishes at the root, and
+// Halley's step towards it.
+func (p *LP) phaseStep(u float64) (phase, step float64) {
+	l := float64(p.L)
+	q := (p.V - u) * (p.V + u)
+	g := decay(p.L, math.Sqrt(q))
+	below, at, _ := bessel.JPair(p.L, u) // u exceeds l, see the zeros
+	phase = math.Atan((u*below + g*at) / (u*at - g*below))
+	// The angle whose tangent is x/u = J_{l-1}/J_l.
+	r := 1 / (at*at + below*below)
+	half, cosine := at*below*r, (at-below)*(at+below)*r // of twice the angle
+	first := -1 + (2*l-1)*half/u
+	second := (2*l - 1) / u * (cosine*first - half/u)
+	// The angle whose tangent is G/u.
+	pq := g * (g + 2*l) / q
+	g1 := u * (1 - pq)
+	g2 := 1 - pq - 2*u/q*((g+l)*g1+u*pq)
+	s := 1 / (u*u + g*g)
+	turn := (g1*u - g) * s
+	first += turn
+	second += (g2*u - 2*turn*(u+g*g1)) * s
+	h := phase / first
+	return phase, h / (1 - h*second/(2*first))
 }
 
 // guessU returns u to a per cent or so: Gloge 1971, equation 16 for LP01 and

@@ -61,7 +61,12 @@ func (f *Step) glasses(function string, wavelength float64) (core, cladding tayl
 	}
 	if cladding, err = f.Cladding.Taylor(wavelength); err != nil {
 		err = fmt.Errorf("cladding: %w", err)
+		return
 	}
+	if err = domain.Positive(function, "core index", core[0], ""); err != nil {
+		return
+	}
+	err = domain.Positive(function, "cladding index", cladding[0], "")
 	return
 }
 
@@ -160,7 +165,7 @@ func (m *StepLP) solve(wavelength float64) (s solved, err error) {
 	}
 	s.lp, err = SolveLP(v, m.L, m.M)
 	if err != nil {
-		return s, fmt.Errorf("%v at wavelength %v m: %w", m, wavelength, err)
+		return s, fmt.Errorf("%s at wavelength %v m: %w", m.String(), wavelength, err) // m itself would escape
 	}
 	s.b = s.lp.logSeries()
 	return s, nil

@@ -80,6 +80,10 @@ func TestAll(t *testing.T) {
 	zeros, err = All(func(x float64) (float64, float64, error) { return 1 + x*x, 2 * x, nil }, -1, 1, 5)
 	require.NoError(t, err)
 	assert.Empty(t, zeros)
+	// A zero on a cell's end does not hide the one after it.
+	zeros, err = All(func(x float64) (float64, float64, error) { return x * (x - 0.5), 2*x - 0.5, nil }, -1, 1, 2)
+	require.NoError(t, err)
+	assert.InDeltaSlice(t, []float64{0, 0.5}, zeros, 1e-15)
 	_, err = All(func(x float64) (float64, float64, error) { return math.NaN(), 0, nil }, -1, 1, 5)
 	assert.ErrorIs(t, err, ErrNotFinite)
 	own := errors.New("own")

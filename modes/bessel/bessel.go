@@ -106,28 +106,10 @@ func JPair(l int, x float64) (below, at float64, err error) {
 	return below, at, nil
 }
 
-// jPair returns J_{l-1}(x) and J_l(x) for x > l, by recurrence towards higher
-// orders (DLMF 10.6.1), which is stable there. For l = 0 the first is -J_1.
-func jPair(l int, x float64) (below, at float64) {
-	j0, j1 := math.J0(x), math.J1(x)
-	if l == 0 {
-		return -j1, j0
-	}
-	// The rounding of 2/x would act in every step like the same error of x.
-	two := 2 / x
-	rest := math.FMA(-two, x, 2) / x
-	for k := 1; k < l; k++ {
-		f := float64(k)
-		c := f * two
-		j0, j1 = j1, math.FMA(c, j1, (math.FMA(f, two, -c)+f*rest)*j1-j0)
-	}
-	return j0, j1
-}
-
-// JRatio returns J_{l+1}(x)/J_l(x). Its relative error is of the order of 1e-15,
-// but next to a zero of either function it is the absolute error of x times the
-// slope there that counts. It fails at a zero of J_l that a float64 hits, where
-// the ratio is infinite.
+// JRatio returns J_{l+1}(x)/J_l(x). Its relative error is of the order of 1e-15, for
+// large orders up to 1e-16 (40 + l) where x is just above l; but next to a zero of
+// either function it is the absolute error of x times the slope there that counts. It
+// fails at a zero of J_l that a float64 hits, where the ratio is infinite.
 func JRatio(l int, x float64) (float64, error) {
 	if err := check("bessel.JRatio", l, x); err != nil {
 		return 0, err

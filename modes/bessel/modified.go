@@ -13,7 +13,7 @@ import (
 //	x K_1 = 1 + 2 t (h sum t^k/(k!(k+1)!) - sum (H_k + H_{k+1})/2 t^k/(k!(k+1)!))
 func kSeries(x float64) (k0, xk1 float64) {
 	t := x * x / 4
-	h := math.Log(x/2) + eulerGamma
+	h := math.Log(x) + (eulerGamma - math.Ln2) // x/2 may be 0
 	var i0, s0, i1, s1 float64
 	for k := len(kSeriesTerms) - 1; k >= 0; k-- {
 		c := &kSeriesTerms[k]
@@ -97,27 +97,38 @@ func Decay(l int, x float64) (float64, error) {
 }
 
 func decay(l int, x float64) float64 {
-	x2 := x * x
-	var r float64 // G of order 1, from G_0 G_1 = x^2
+	nu := float64(l)
+	if r2 := nu*nu + x*x; l >= directOrders && r2 >= radiusMin*radiusMin {
+		return decayLarge(l, x, r2)
+	}
 	if x <= 1 {
 		k0, xk1 := kSeries(x)
 		if l == 0 {
 			return xk1 / k0
 		}
-		r = x2 * k0 / xk1
-	} else {
-		piece, s := kPiece(x)
-		ratio := polynomial(&kRatioFit[piece], s)
-		if l == 0 {
-			return x * ratio
+		// G of order 1, from G_0 G_1 = x^2, and up.
+		x2 := x * x
+		g := x2 * k0 / xk1
+		for k := 1; k < l; k++ {
+			g = x2 / (2*float64(k) + g)
 		}
-		r = x / ratio
+		return g
 	}
+	piece, s := kPiece(x)
+	k0, k1 := 1.0, polynomial(&kRatioFit[piece], s)
+	if l == 0 {
+		return x * k1
+	}
+	// l is below radiusMin here, so that nothing overflows.
+	two := 2 / x
 	for k := 1; k < l; k++ {
-		r = x2 / (2*float64(k) + r)
+		k0, k1 = k1, math.FMA(float64(k)*two, k1, k0)
 	}
-	return r
+	return x * k0 / k1
 }
+
+// directOrders is the order from which the expansion for large R beats the recurrence.
+const directOrders = 8
 
 // KScaled returns e^x K_l(x). It fails where that overflows, x far below l.
 // Its relative error is of the order of 1e-15, growing like the square root of l.

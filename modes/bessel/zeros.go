@@ -28,18 +28,28 @@ func JZeroParts(l, m int) (high, low float64, err error) {
 }
 
 func jZero(l, m int) (high, low float64) {
+	if l < tableOrders && m <= tableStart[l+1]-tableStart[l] {
+		z := zeroTable[tableStart[l]+m-1]
+		return z.high, z.low
+	}
 	x := jZeroGuess(l, m)
 	nu := float64(l)
 	for range 8 {
-		below, at := jPair(l, x)
-		// Halley's step, from J' = J_{l-1} - l J/x and Bessel's equation: the error
-		// after it is of the order of the step cubed.
-		h := at / (below - nu/x*at)
-		step := h / (1 + h*(1/x+(1-nu/x)*(1+nu/x)*h)/2)
+		var step float64
+		if theta, s, _, ok := JPhase(l, x, m-1); ok && l >= directOrders {
+			// J_l vanishes at theta = pi/2, and theta is nearly linear in x.
+			step = (theta - math.Pi/2 - piLow/2) * x / s
+		} else {
+			below, at := jPair(l, x)
+			// Halley's step, from J' = J_{l-1} - l J/x and Bessel's equation: the error
+			// after it is of the order of the step cubed.
+			h := at / (below - nu/x*at)
+			step = h / (1 + h*(1/x+(1-nu/x)*(1+nu/x)*h)/2)
+		}
 		high = x - step
 		low = (x - high) - step
 		x = high
-		if math.Abs(step) < 2e-6 {
+		if math.Abs(step) < 1e-8*(1+nu/256) {
 			break
 		}
 	}
