@@ -2,7 +2,6 @@ package modes
 
 import (
 	"math"
-	"sort"
 
 	"glassthread/materials/domain"
 	"glassthread/modes/bessel"
@@ -107,65 +106,4 @@ func cutoffError(function string, v float64, l, m int) error {
 		allowed += " " + formatV(c)
 	}
 	return &domain.Error{Func: function, Argument: "v", Value: v, Allowed: allowed, Kind: ErrCutoff}
-}
-
-// GuidedLP returns every guided LP mode at a normalised frequency v above 0 and at
-// most MaxListV, in falling B. None is missed: they are the pairs (l, m) whose
-// cut-off, a zero of a Bessel function, lies below v. Each label stands once; see
-// Degeneracy. Close to a cut-off the errors are those of SolveLP.
-func GuidedLP(v float64) ([]LP, error) {
-	if err := checkV("modes.GuidedLP", v, MaxListV); err != nil {
-		return nil, err
-	}
-	list := make([]LP, 0, int(v*v/8+v)+2)
-	// The zeros of J_l end the modes of order l and are the cut-offs of order l + 1.
-	var cuts, ends []zeroParts
-	ends = zerosBelow(0, v, ends)
-	for l := 0; ; l++ {
-		if l == 0 {
-			cuts = append(append(cuts, zeroParts{}), zerosBelow(1, v, nil)...)
-		} else {
-			cuts, ends = ends, cuts
-			ends = zerosBelow(l, v, ends[:0])
-		}
-		guided := 0
-		for i, c := range cuts {
-			above := (v - c.high) - c.low
-			if above <= 0 {
-				break
-			}
-			list = append(list, solveLP(v, l, i+1, c.high, above, ends[i].high))
-			guided++
-		}
-		if guided == 0 {
-			break
-		}
-		if l == 0 { // the zeros of J_0, not of J_1, are the cut-offs of l = 1
-			cuts = cuts[:0]
-		}
-	}
-	sort.Slice(list, func(i, j int) bool {
-		a, b := &list[i], &list[j]
-		if a.B != b.B {
-			return a.B > b.B
-		}
-		return a.L < b.L || a.L == b.L && a.M < b.M
-	})
-	return list, nil
-}
-
-type zeroParts struct{ high, low float64 }
-
-// zerosBelow appends the zeros of J_l up to v, and the next beyond.
-func zerosBelow(l int, v float64, list []zeroParts) []zeroParts {
-	for m := 1; ; m++ {
-		high, low, err := bessel.JZeroParts(l, m)
-		if err != nil { // out of range only far beyond MaxListV
-			return list
-		}
-		list = append(list, zeroParts{high, low})
-		if high > v {
-			return list
-		}
-	}
 }

@@ -33,4 +33,4 @@ const MaxV = 1e5
 
 // MaxListV is the largest V for which GuidedLP lists the modes; the list has about
 // V^2/8 entries.
-const MaxListV = 2000
+const MaxListV = 3000

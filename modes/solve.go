@@ -23,12 +23,17 @@ func formatV(v float64) string { return strconv.FormatFloat(v, 'g', 10, 64) }
 const (
 	// nearCutoff is the distance from cut-off in V within which w^2, not u, is the
 	// unknown: u would leave w^2 = V^2 - u^2 too few digits.
-	nearCutoff = 0.5
+	nearCutoff = 0.1
 	// smallV is the V below which LP01 is solved for ln w^2.
 	smallV = 1.6
 	// tinyW2 is ln w^2 below which w^2 no longer matters beside V^2.
 	tinyW2    = -40
 	maxPasses = 60
+	// lastStep is the step in u that ends Halley's method: the error left is of the
+	// order of its cube.
+	lastStep = 4e-6
+	// largeOrder is the order from which solveLarge beats the recurrences.
+	largeOrder = 8
 )
 
 // logTwoLessGamma is ln 2 - gamma: 1/G = ln(2/w) - gamma + O(w^2) for l = 0, since
@@ -47,7 +52,10 @@ func solveLP(v float64, l, m int, cut, above, end float64) LP {
 	case cut > 0 && above < nearCutoff:
 		p.solveNearCutoff(cut, above)
 	default:
-		p.solvePhase(cut, end)
+		u := p.guessU(cut)
+		if !p.solveLarge(u) {
+			p.solveDirect(u, cut, end)
+		}
 	}
 	return p
 }
@@ -59,15 +67,13 @@ func (p *LP) setW(w float64) {
 	p.B = (w / p.V) * (w / p.V)
 }
 
-// solvePhase solves for u between cut and end by Halley's method on the phase
+// solveDirect solves for u between cut and end by Halley's method on the phase
 //
 //	atan(x/u) + atan(G/u) = atan((u J_{l-1} + G J_l)/(u J_l - G J_{l-1})),
 //
-// which has no poles and is nearly linear in u.
-func (p *LP) solvePhase(cut, end float64) {
-	v := p.V
-	low, high := cut, math.Min(end, v)
-	u := p.guessU(cut)
+// which has no poles and is nearly linear in u, from a trial u.
+func (p *LP) solveDirect(u, cut, end float64) {
+	low, high := cut, math.Min(end, p.V)
 	if !(u > low && u < high) {
 		u = (low + high) / 2
 	}
@@ -78,8 +84,7 @@ func (p *LP) solvePhase(cut, end float64) {
 		} else {
 			high = u
 		}
-		// The error left is of the order of the step cubed.
-		if math.Abs(step) < 4e-6 || pass == maxPasses {
+		if math.Abs(step) < lastStep || pass == maxPasses {
 			p.setU(u, step)
 			return
 		}
@@ -88,6 +93,55 @@ func (p *LP) solvePhase(cut, end float64) {
 			u = (low + high) / 2
 		}
 	}
+}
+
+// solveLarge solves for u from a trial u by Debye's expansions, see bessel.JPhase: with
+// x = l + rho - s tan(theta) the equation is
+//
+//	theta - (m - 1) pi = atan((rho + l + G)/s),
+//
+// whose branch is that of the label, whatever the trial u. It reports false where the
+// expansions do not reach, or the trial u is too far off; then p is as before.
+func (p *LP) solveLarge(u float64) bool {
+	if p.L < largeOrder {
+		return false
+	}
+	v, l := p.V, float64(p.L)
+	for range 8 {
+		if !(u < v) {
+			return false
+		}
+		theta, s, rho, ok := bessel.JPhase(p.L, u, p.M-1)
+		if !ok {
+			return false
+		}
+		q := (v - u) * (v + u)
+		g := decay(p.L, math.Sqrt(q))
+		// Derivatives with respect to ln u: ds = -2 rho s, and rho's from the Riccati
+		// equation.
+		a := (rho + l + g) / s
+		over := 1 / (1 + a*a)
+		u2 := u * u
+		pq := g * (g + 2*l) / q
+		g1 := u2 * (1 - pq)
+		g2 := g1 + u2*(1-pq) - 2*u2/q*((g+l)*g1+u2*pq)
+		rho1 := s*s - (u-l)*(u+l) - rho*rho
+		rho2 := -4*rho*s*s - 2*u2 - 2*rho*rho1
+		a1 := (rho1+g1)/s + 2*rho*a
+		a2 := (rho2+g2+2*rho*(rho1+g1))/s + 2*(rho1*a+rho*a1)
+		f := theta - math.Atan(a)
+		f1 := s - a1*over
+		f2 := -2*rho*s - (a2-2*a*a1*a1*over)*over
+		h := f / f1
+		h /= 1 - h*f2/(2*f1)
+		step := u * h * (1 - h/2) // u (1 - e^-h)
+		if math.Abs(step) < lastStep {
+			p.setU(u, step)
+			return true
+		}
+		u -= step
+	}
+	return false
 }
 
 // setU completes the mode from a trial u and the last step; V - u is formed before u

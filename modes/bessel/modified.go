@@ -55,12 +55,15 @@ func kPiece(x float64) (piece int, s float64) {
 	return 3, 16*t - 1
 }
 
+// polynomial sums even and odd powers apart, which halves the chain of operations.
 func polynomial(c *[kTerms]float64, s float64) float64 {
-	sum := c[kTerms-1]
-	for k := kTerms - 2; k >= 0; k-- {
-		sum = sum*s + c[k]
+	s2 := s * s
+	even, odd := c[kTerms-2], c[kTerms-1]
+	for k := kTerms - 4; k >= 0; k -= 2 {
+		even = even*s2 + c[k]
+		odd = odd*s2 + c[k+1]
 	}
-	return sum
+	return even + s*odd
 }
 
 // KRatio returns K_{l+1}(x)/K_l(x), which exceeds 1. Its relative error is of the
@@ -98,7 +101,7 @@ func Decay(l int, x float64) (float64, error) {
 
 func decay(l int, x float64) float64 {
 	nu := float64(l)
-	if r2 := nu*nu + x*x; l >= directOrders && r2 >= radiusMin*radiusMin {
+	if r2 := nu*nu + x*x; r2 >= radiusFew*radiusFew || l >= directOrders && r2 >= radiusMin*radiusMin {
 		return decayLarge(l, x, r2)
 	}
 	if x <= 1 {
@@ -170,17 +173,20 @@ func IRatio(l int, x float64) (float64, error) {
 	return iRatio(l, x), nil
 }
 
-// iRatio evaluates the continued fraction DLMF 10.33.1, whose terms are all
-// positive, from its tail: from index n to l an error shrinks by the product of
-// the squares of I_{k+1}/I_k, about exp(-sum 2 asinh(k/x)).
+// iRatio evaluates the continued fraction DLMF 10.33.1, whose terms are all positive, from
+// its tail: from index n to l an error shrinks by the product of the squares of
+// I_{k+1}/I_k, about exp(-sum 2 asinh(k/x)), for the n below less than e^-40. For large
+// R^2 = l^2 + x^2 it is the expansion of decayLarge with R -> -R.
 func iRatio(l int, x float64) float64 {
-	n, shrink := l, 0.0
-	for shrink < 40 { // e^-40 is far below half a unit in the last place
-		n++
-		shrink += 2 * math.Asinh(float64(n)/x)
+	nu := float64(l)
+	if r2 := nu*nu + x*x; r2 >= radiusMin*radiusMin {
+		r := math.Sqrt(r2)
+		z := 1 / r2
+		even, odd := debye13(nu*nu*z, z)
+		return x * (1/(r+nu) + (odd-r*even)*z)
 	}
 	r := 0.0
-	for k := n; k > l; k-- {
+	for k := l + 16 + int(7*math.Sqrt(x)); k > l; k-- {
 		r = 1 / (2*float64(k)/x + r)
 	}
 	return r

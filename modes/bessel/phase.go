@@ -39,6 +39,9 @@ func JPhase(l int, x float64, n int) (theta, s, rho float64, ok bool) {
 	low := math.FMA(x, x, -square)
 	r2 := square - nu*nu // nu*nu is exact
 	low += (square - r2) - nu*nu
+	if !(r2 >= phaseMost*phaseMost) { // the main phase is below R
+		return 0, 0, 0, false
+	}
 	r := math.Sqrt(r2 + low)
 	rest := (math.FMA(-r, r, r2) + low) / (2 * r)
 	// acos(l/x) = atan(R/l) = table entry + d, tan(d) = top/bottom.

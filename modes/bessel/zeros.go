@@ -27,6 +27,48 @@ func JZeroParts(l, m int) (high, low float64, err error) {
 	return high, low, nil
 }
 
+// JPrimeZero returns j'_{l,m}, the m-th zero of dJ_l/dx, for l from 0 and m from 1 to
+// MaxOrder, to about one unit in the last place. As in DLMF 10.21(i), j'_{0,1} is 0 and
+// otherwise j'_{0,m} is j_{1,m-1}; for l >= 1 the zero at 0 is not counted.
+func JPrimeZero(l, m int) (float64, error) {
+	if err := checkOrder("bessel.JPrimeZero", l); err != nil {
+		return 0, err
+	}
+	if m < 1 || m > MaxOrder {
+		return 0, &domain.Error{Func: "bessel.JPrimeZero", Argument: "m", Value: float64(m), Allowed: "from 1 to 100000"}
+	}
+	if l == 0 {
+		if m == 1 {
+			return 0, nil
+		}
+		high, _ := jZero(1, m-1)
+		return high, nil
+	}
+	x := jPrimeZeroGuess(l, m)
+	nu := float64(l)
+	for range 10 {
+		var step float64
+		if theta, s, rho, ok := JPhase(l, x, m-1); ok && l >= directOrders {
+			// J' = 0 where tan(theta) = rho/s, which varies slowly.
+			step = (theta - math.Atan(rho/s)) * x / s
+		} else {
+			below, j := jPair(l, x)
+			r := 1 / x
+			first := below - nu*r*j
+			well := (1 - nu*r) * (1 + nu*r)
+			second := -first*r - well*j
+			third := -second*r + first*(r*r-well) - 2*nu*nu*r*r*r*j
+			h := first / second
+			step = h / (1 - h*third/(2*second)) // Halley
+		}
+		x -= step
+		if math.Abs(step) < 1e-8*x {
+			break
+		}
+	}
+	return x, nil
+}
+
 func jZero(l, m int) (high, low float64) {
 	if l < tableOrders && m <= tableStart[l+1]-tableStart[l] {
 		z := zeroTable[tableStart[l]+m-1]
@@ -65,20 +107,39 @@ func jZeroGuess(l, m int) float64 {
 		r := 1 / (8 * b)
 		return b + r*(1-r*r*(124./3-r*r*120928./15))
 	}
-	nu := float64(l)
 	// The m-th zero of Ai is -t, from DLMF 9.9.6 and 9.9.18.
 	t := 3 * math.Pi / 8 * float64(4*m-1)
 	t2 := 1 / (t * t)
 	t = math.Cbrt(t*t) * (1 + t2*(5./48-t2*(5./36-t2*77125./82944)))
-	zeta := t / math.Cbrt(nu*nu)
-	tau := tanLessAngle(2. / 3 * zeta * math.Sqrt(zeta))
-	z := math.Sqrt(1 + tau*tau)
+	nu := float64(l)
+	zeta, tau, z := olver(nu, t)
 	b0 := 0.018 // 2^(1/3)/70, the limit of what follows for zeta to 0
 	if zeta > 0.2 {
 		b0 = -5/(48*zeta*zeta) + (5/(24*tau*tau*tau)+1/(8*tau))/math.Sqrt(zeta)
 	}
 	h2 := 2 * math.Sqrt(zeta) / tau
 	return nu*z + z*h2*b0/(2*nu)
+}
+
+// jPrimeZeroGuess is the leading term of DLMF 10.21.43, for l >= 1.
+func jPrimeZeroGuess(l, m int) float64 {
+	// The m-th zero of Ai' is -t, from DLMF 9.9.8 and 9.9.19; the series is poor for the
+	// first, 1.01879 (DLMF table 9.9.1).
+	t := 1.01879
+	if m > 1 {
+		t = 3 * math.Pi / 8 * float64(4*m-3)
+		t2 := 1 / (t * t)
+		t = math.Cbrt(t*t) * (1 - t2*(7./48-t2*35./288))
+	}
+	_, _, z := olver(float64(l), t)
+	return float64(l) * z
+}
+
+// olver returns -zeta = t nu^(-2/3), z(zeta) and the root of z^2 - 1 (DLMF 10.20.3).
+func olver(nu, t float64) (zeta, tau, z float64) {
+	zeta = t / math.Cbrt(nu*nu)
+	tau = tanLessAngle(2. / 3 * zeta * math.Sqrt(zeta))
+	return zeta, tau, math.Sqrt(1 + tau*tau)
 }
 
 // tanLessAngle solves tau - atan(tau) = y for y > 0.
