@@ -160,7 +160,7 @@ func (p *LP) solveFreely(start float64) bool {
 			return false
 		}
 		_, step := p.phaseStep(u)
-		if math.Abs(step) < lastStep {
+		if math.Abs(step) < lastStep4*math.Min(1, p.V-u) {
 			p.setU(u, step)
 			return math.Abs(u-start) < 0.3
 		}

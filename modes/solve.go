@@ -24,14 +24,14 @@ const (
 	// nearCutoff is the distance from cut-off in V within which w^2, not u, is the
 	// unknown: u would leave w^2 = V^2 - u^2 too few digits.
 	nearCutoff = 0.1
-	// smallV is the V below which LP01 is solved for ln w^2.
-	smallV = 1.6
 	// tinyW2 is ln w^2 below which w^2 no longer matters beside V^2.
 	tinyW2    = -40
 	maxPasses = 60
-	// lastStep is the step in u that ends Halley's method: the error left is of the
-	// order of its cube.
-	lastStep = 4e-6
+	// lastStep3 and lastStep4 end an iteration of third or fourth order in u: the error
+	// left is of the order of that power of the step, both in units of V - u where that
+	// is below 1.
+	lastStep3 = 4e-6
+	lastStep4 = 1e-4
 	// largeOrder is the order from which solveLarge beats the recurrences.
 	largeOrder = 8
 )
@@ -45,15 +45,18 @@ const logTwoLessGamma = math.Ln2 - 0.57721566490153286060651209008240243
 func solveLP(v float64, l, m int, cut, above, end float64) LP {
 	p := LP{L: l, M: m, V: v}
 	switch {
-	case cut == 0 && v < smallV:
+	case cut == 0 && v >= lp01From && v < lp01To:
+		p.solveFit()
+	case cut == 0 && v < lp01From:
 		p.solveSmall()
 	case cut > 0 && above < nearCutoff && l == 0:
 		p.solveNearCutoff0(cut, above)
 	case cut > 0 && above < nearCutoff:
 		p.solveNearCutoff(cut, above)
 	default:
-		u := p.guessU(cut)
-		if !p.solveLarge(u) {
+		if u, ok := p.tableU(cut, end); ok {
+			p.solveDirect(u, cut, end)
+		} else if u := p.guessU(cut); !p.solveLarge(u) {
 			p.solveDirect(u, cut, end)
 		}
 	}
@@ -67,7 +70,7 @@ func (p *LP) setW(w float64) {
 	p.B = (w / p.V) * (w / p.V)
 }
 
-// solveDirect solves for u between cut and end by Halley's method on the phase
+// solveDirect solves for u between cut and end by steps of fourth order on the phase
 //
 //	atan(x/u) + atan(G/u) = atan((u J_{l-1} + G J_l)/(u J_l - G J_{l-1})),
 //
@@ -84,7 +87,7 @@ func (p *LP) solveDirect(u, cut, end float64) {
 		} else {
 			high = u
 		}
-		if math.Abs(step) < lastStep || pass == maxPasses {
+		if math.Abs(step) < lastStep4*math.Min(1, p.V-u) || pass == maxPasses {
 			p.setU(u, step)
 			return
 		}
@@ -135,7 +138,7 @@ func (p *LP) solveLarge(u float64) bool {
 		h := f / f1
 		h /= 1 - h*f2/(2*f1)
 		step := u * h * (1 - h/2) // u (1 - e^-h)
-		if math.Abs(step) < lastStep {
+		if math.Abs(step) < lastStep3*math.Min(1, v-u) {
 			p.setU(u, step)
 			return true
 		}
@@ -162,21 +165,32 @@ func (p *LP) phaseStep(u float64) (phase, step float64) {
 	g := decay(p.L, math.Sqrt(q))
 	below, at, _ := bessel.JPair(p.L, u) // u exceeds l, see the zeros
 	phase = math.Atan((u*below + g*at) / (u*at - g*below))
-	// The angle whose tangent is x/u = J_{l-1}/J_l.
-	r := 1 / (at*at + below*below)
-	half, cosine := at*below*r, (at-below)*(at+below)*r // of twice the angle
-	first := -1 + (2*l-1)*half/u
-	second := (2*l - 1) / u * (cosine*first - half/u)
-	// The angle whose tangent is G/u.
-	pq := g * (g + 2*l) / q
-	g1 := u * (1 - pq)
-	g2 := 1 - pq - 2*u/q*((g+l)*g1+u*pq)
+	iu, iq := 1/u, 1/q
+	// The angle whose tangent is x/u = J_{l-1}/J_l: a' = -1 + (l - 1/2) sin(2a)/u.
+	r := iu / (at*at + below*below)
+	sine := (2*l - 1) * at * below * r
+	cosine := (2*l - 1) * (at - below) * (at + below) * r
+	a1 := -1 + sine
+	a2 := cosine*a1 - sine*iu
+	a3 := 2*iu*(sine*iu-cosine*a1) - 4*sine*a1*a1 + cosine*a2
+	// The angle whose tangent is G/u, with G' = u (1 - p), p = G (G + 2l)/q.
+	p0 := g * (g + 2*l) * iq
+	g1 := u * (1 - p0)
+	p1 := 2 * iq * ((g+l)*g1 + u*p0)
+	g2 := 1 - p0 - u*p1
+	p2 := 2 * iq * (g1*g1 + (g+l)*g2 + p0 + 2*u*p1)
+	g3 := -2*p1 - u*p2
 	s := 1 / (u*u + g*g)
-	turn := (g1*u - g) * s
-	first += turn
-	second += (g2*u - 2*turn*(u+g*g1)) * s
-	h := phase / first
-	return phase, h / (1 - h*second/(2*first))
+	s1, s2 := 2*(u+g*g1), 2*(1+g1*g1+g*g2) // derivatives of 1/s
+	b1 := (g1*u - g) * s
+	b2 := (g2*u - b1*s1) * s
+	b3 := (g2 + g3*u - 2*b2*s1 - b1*s2) * s
+	// Reversion of the series of the phase.
+	inverse := 1 / (a1 + b1)
+	h := phase * inverse
+	c2 := (a2 + b2) * inverse / 2
+	c3 := (a3 + b3) * inverse / 6
+	return phase, h * (1 + h*(c2+h*(2*c2*c2-c3)))
 }
 
 // guessU returns u to a per cent or so: Gloge 1971, equation 16 for LP01 and
@@ -187,8 +201,30 @@ func (p *LP) guessU(cut float64) float64 {
 		return (1 + math.Sqrt2) * v / (1 + math.Sqrt(math.Sqrt(4+v*v*v*v)))
 	}
 	l := float64(p.L)
-	s := math.Sqrt(math.Max(cut*cut-l*l-1, 1))
-	return cut * math.Exp((math.Asin(s/cut)-math.Asin(s/v))/s)
+	s2 := math.Max(cut*cut-l*l-1, 1)
+	s := math.Sqrt(s2)
+	// asin(s/cut) - asin(s/v) as the arcsine of d, that by Abramowitz and Stegun 4.4.45.
+	d := s / (cut * v) * (math.Sqrt(v*v-s2) - math.Sqrt(cut*cut-s2))
+	angle := math.Pi/2 - math.Sqrt(1-d)*(1.5707288+d*(-0.2121144+d*(0.0742610-d*0.0187293)))
+	return cut * math.Exp(angle/s)
+}
+
+// tableU returns u to about 1e-4, from fits over xi = w0/(w0 + 1.6 sqrt(cut)), w0^2 = v^2 -
+// cut^2, where there is a fit for the mode.
+func (p *LP) tableU(cut, end float64) (u float64, ok bool) {
+	if p.L >= trialOrders || p.M > trialStart[p.L+1]-trialStart[p.L] || p.V > trialMaxV {
+		return 0, false
+	}
+	w := math.Sqrt((p.V - cut) * (p.V + cut))
+	x := 2*w/(w+trialScale*math.Sqrt(cut)) - 1
+	c := &trialFit[trialStart[p.L]+p.M-1]
+	even, odd := c[trialTerms-2], c[trialTerms-1]
+	x2 := float32(x * x)
+	for k := trialTerms - 4; k >= 0; k -= 2 {
+		even = even*x2 + c[k]
+		odd = odd*x2 + c[k+1]
+	}
+	return cut + (end-cut)*(float64(even)+x*float64(odd)), true
 }
 
 // decay is bessel.Decay without its checks: w is in range by construction.
@@ -328,9 +364,6 @@ func (p *LP) solveSmall() {
 		p.solveTiny()
 		return
 	}
-	if v > 1.2 {
-		y = 2 * math.Log(1.1428*v-0.996) // Rudolph and Neumann 1976
-	}
 	low, high := -24.0, 2*math.Log(v)
 	for pass := 0; ; pass++ {
 		if !(y > low && y < high) {
@@ -383,7 +416,7 @@ func (p *LP) solveTiny() {
 	p.setW(w)
 }
 
-// lessPole returns 2/s - J_0(u)/(u J_1(u)), s = u^2 <= 2.6. The coefficients are
+// lessPole returns 2/s - J_0(u)/(u J_1(u)), s = u^2 <= 0.25. The coefficients are
 // those of the quotient of the two power series: sum over the zeros of J_1 of
 // 2/j^(2k+2), which shrink like 1/14.68^k (Rayleigh sums; DLMF 10.21.57 and G. N.
 // Watson, Theory of Bessel Functions, section 15.51).
