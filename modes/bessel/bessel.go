@@ -11,9 +11,50 @@
 //	dk/dx = k^2 - 1 - (2l+1) k/x
 //	di/dx = 1 - i^2 - (2l+1) i/x.
 //
-// Orders run from 0 to MaxOrder and arguments from 0 (excluded) to MaxArgument.
-// The cost grows in proportion to the order. DLMF is the NIST Digital Library
-// of Mathematical Functions, https://dlmf.nist.gov, chapter 10.
+// Orders run from 0 to MaxOrder and arguments from 0 (excluded) to MaxArgument. DLMF is
+// the NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov, chapter 10.
+//
+// # Errors and times
+//
+// Against tables of mpmath at 50 to 80 digits, arguments from 1e-8 to 1e5, in units in the
+// last place (JRatio: the angle whose tangent the ratio is, in units of 2^-53, since next to
+// a zero or pole a relative error means nothing), and the time of one call on one core of a
+// small server, at x = 2l + 5 or m = 3 + l/4 with l the upper order:
+//
+//	function     orders      values  mean   worst  time (ns)
+//	JRatio          0-10        575   0.71     8.1        38
+//	JRatio         11-100       255   1.91    14.5       183
+//	JRatio        101-1000      313   8.61   219.7       117
+//	JRatio       1001-10000     255  47.69  1194.7       120
+//	KRatio          0-10        275   0.41     1.9        24
+//	KRatio         11-100       195   0.38     1.3        23
+//	KRatio        101-1000      193   0.38     1.2        23
+//	KRatio       1001-10000     195   0.33     1.3        23
+//	KScaled         0-10        275   0.99     6.1        25
+//	KScaled        11-100       187   2.48    29.9       184
+//	KScaled       101-1000      107   4.88    19.8      2023
+//	KScaled      1001-10000      16   9.21    20.9     20354
+//	IScaled         0-10        275   1.22     5.9       313
+//	IScaled        11-100       187   2.61    40.6       261
+//	IScaled       101-1000      106   4.93    27.2      2081
+//	IScaled      1001-10000      16  10.41    23.9     20644
+//	JZero           0-10        160   0.22     0.5         6
+//	JZero          11-100        96   0.25     0.5       295
+//	JZero         101-1000       80   0.24     0.7       272
+//	JZero        1001-10000      64   0.25     0.5       272
+//	JPrimeZero      0-10        160   0.23     0.5       327
+//	JPrimeZero     11-100        96   0.25     0.5       411
+//	JPrimeZero    101-1000       80   0.26     0.5       363
+//	JPrimeZero   1001-10000      64   0.27     0.8       272
+//
+// Made by
+//
+//	go test -run TestReport -report -v ./modes/bessel
+//
+// Weak corners: JRatio, J and JPair close above x = l at high order, where the recurrence
+// takes l steps and its roundings add up to about 1e-16 (40 + l); KScaled and IScaled at high
+// order, whose error and cost grow with l; the slopes KRatioSlope and IRatioSlope at x far
+// above l, which lose digits like x^2.
 package bessel
 
 import (
@@ -115,13 +156,29 @@ func JRatio(l int, x float64) (float64, error) {
 		return 0, err
 	}
 	r := 0.0
-	if x > float64(l) {
+	switch {
+	case x <= float64(l):
+		r = jFraction(l, x)
+	case l >= longOrders && jPhaseRatio(l, x, &r):
+	default:
 		a, b := jPair(l+1, x)
 		r = b / a
-	} else {
-		r = jFraction(l, x)
 	}
 	return r, domain.Result("bessel.JRatio", "ratio", r)
+}
+
+// longOrders is the order from which the expansion of the phase beats the recurrence.
+const longOrders = 32
+
+// jPhaseRatio sets the ratio from JPhase, and reports whether that reaches.
+func jPhaseRatio(l int, x float64, r *float64) bool {
+	theta, _, _, ok := JPhase(l, x, 0)
+	if !ok {
+		return false
+	}
+	theta, s, rho, ok := JPhase(l, x, int(math.Round(theta/math.Pi)))
+	*r = (float64(l) - rho + s*math.Tan(theta)) / x
+	return ok
 }
 
 // jFraction returns J_{l+1}/J_l for x <= l from the continued fraction DLMF

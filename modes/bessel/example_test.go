@@ -110,3 +110,60 @@ func ExampleIRatio() {
 	// 0.6977747 <nil>
 	// 0.9999995 <nil>
 }
+
+// The first zeros of J_1' and J_2', 1.84118 and 3.05424 (Abramowitz and Stegun 1964,
+// table 9.5).
+func ExampleJPrimeZero() {
+	a, _ := bessel.JPrimeZero(1, 1)
+	b, err := bessel.JPrimeZero(2, 1)
+	fmt.Printf("%.5f %.5f %v\n", a, b, err)
+	// Output: 1.84118 3.05424 <nil>
+}
+
+// The phase counts the zeros of J_2 below 100: one wherever theta passes an odd multiple
+// of pi/2.
+func ExampleJPhase() {
+	theta, _, _, ok := bessel.JPhase(2, 100, 0)
+	count := int(theta/math.Pi + 0.5)
+	before, _ := bessel.JZero(2, count)
+	after, _ := bessel.JZero(2, count+1)
+	fmt.Println(count, before < 100 && after > 100, ok)
+	// Output: 31 true true
+}
+
+// J_1/J_0 at 2 and its derivative, 1 + j^2 - j/2.
+func ExampleJRatioSlope() {
+	j, _ := bessel.JRatio(0, 2)
+	fmt.Printf("%.6f %.6f\n", j, bessel.JRatioSlope(0, 2, j))
+	// Output: 2.575920 6.347405
+}
+
+// K_1/K_0 falls with its argument towards 1.
+func ExampleKRatioSlope() {
+	k, _ := bessel.KRatio(0, 2)
+	fmt.Printf("%.6f %.6f\n", k, bessel.KRatioSlope(0, 2, k))
+	// Output: 1.228037 -0.105944
+}
+
+// I_1/I_0 rises towards 1.
+func ExampleIRatioSlope() {
+	i, _ := bessel.IRatio(0, 2)
+	fmt.Printf("%.6f %.6f\n", i, bessel.IRatioSlope(0, 2, i))
+	// Output: 0.697775 0.164223
+}
+
+// e^x K_0(x) falls like the root of 1/x.
+func ExampleKScaledSlope() {
+	value, _ := bessel.KScaled(0, 2)
+	ratio, _ := bessel.KRatio(0, 2)
+	fmt.Printf("%.6f %.6f\n", value, bessel.KScaledSlope(0, 2, value, ratio))
+	// Output: 0.841568 -0.191909
+}
+
+// e^-x I_0(x) falls like the root of 1/x.
+func ExampleIScaledSlope() {
+	value, _ := bessel.IScaled(0, 2)
+	ratio, _ := bessel.IRatio(0, 2)
+	fmt.Printf("%.6f %.6f\n", value, bessel.IScaledSlope(0, 2, value, ratio))
+	// Output: 0.308508 -0.093239
+}

@@ -45,6 +45,11 @@ func FuzzOrderAndArgument(f *testing.F) {
 		within(t, "JPair", -1, 1)(below, err)
 		within(t, "JPair", -1, 1)(at, err)
 		within(t, "KRatio", 1, most)(KRatio(l, x))
+		if theta, s, rho, ok := JPhase(l, x, 1); ok {
+			within(t, "JPhase", -most, most)(theta, nil)
+			within(t, "JPhase", 0, most)(s, nil)
+			within(t, "JPhase", -most, 0)(rho, nil)
+		}
 		within(t, "IRatio", 0, 1)(IRatio(l, x))
 		within(t, "KScaled", 0, most)(KScaled(l, x))
 		within(t, "IScaled", 0, 1+slack)(IScaled(l, x))
@@ -63,6 +68,7 @@ func FuzzJZero(f *testing.F) {
 	}
 	f.Fuzz(func(t *testing.T, l, m int) {
 		within(t, "JZero", float64(max(l, m)), 4.7*MaxOrder)(JZero(l, m))
+		within(t, "JPrimeZero", 0, 4.7*MaxOrder)(JPrimeZero(l, m))
 		high, low, err := JZeroParts(l, m)
 		within(t, "JZero", -1e-10, 1e-10)(low, err)
 		if err != nil {

@@ -16,9 +16,6 @@ const (
 	radiusMin = 40  // for K, terms to k = 13
 )
 
-// MinPhase is the least main phase at which JPhase answers.
-const MinPhase = phaseMost
-
 // JPhase writes J_l = M cos(theta), x dJ_l/dx = J_l (rho - s tan(theta)) for x above l,
 // with s = x dtheta/dx and rho = x M'/M. It returns theta - n pi, s and rho, at a cost
 // that does not grow with l or x: theta from Debye's expansion (DLMF 10.19.6),
@@ -28,7 +25,7 @@ const MinPhase = phaseMost
 // whose main part is formed in doubled precision, so that the result has an absolute
 // error of about 2e-16 however large theta is. The error of s and rho is of the order of
 // 1e-16 s. ok is false where the expansion does not reach that, for a main phase below
-// MinPhase (the first eight zeros of J_l), and for l or x out of range.
+// 25 (the first eight zeros of J_l), and for l or x out of range.
 func JPhase(l int, x float64, n int) (theta, s, rho float64, ok bool) {
 	if l < 0 || l > MaxOrder || !(x > float64(l)) || x > MaxArgument || n < 0 || n > MaxOrder {
 		return 0, 0, 0, false

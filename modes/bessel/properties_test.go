@@ -112,10 +112,11 @@ func TestFormsOfJAgree(t *testing.T) {
 		require.NoError(t, err)
 		small := 4e-16 * amplitude * math.Sqrt(1+float64(l))
 		assert.InDelta(t, at, j, small, "l = %d, x = %v", l, x)
-		// 10.6.1: J_{l-1} + J_{l+1} = (2 l/x) J_l.
+		// 10.6.1: J_{l-1} + J_{l+1} = (2 l/x) J_l. From order 32 the ratio comes from the
+		// phase, so that the errors of the pair show.
 		ratio, err := JRatio(l, x)
 		require.NoError(t, err)
-		assert.InDelta(t, 0, (below+ratio*at-2*float64(l)/x*at)/(1+math.Abs(ratio)), 4e-15*amplitude, "l = %d, x = %v", l, x)
+		assert.InDelta(t, 0, (below+ratio*at-2*float64(l)/x*at)/(1+math.Abs(ratio)), math.Max(4e-15*amplitude, small), "l = %d, x = %v", l, x)
 		if l > 0 {
 			previous, err := J(l-1, x)
 			require.NoError(t, err)

@@ -49,8 +49,11 @@ func JPrimeZero(l, m int) (float64, error) {
 	for range 10 {
 		var step float64
 		if theta, s, rho, ok := JPhase(l, x, m-1); ok && l >= directOrders {
-			// J' = 0 where tan(theta) = rho/s, which varies slowly.
-			step = (theta - math.Atan(rho/s)) * x / s
+			// J' = 0 where tan(theta) = rho/s. With t = ln x, ds/dt = -2 rho s, and
+			// rho's derivative is from the Riccati equation.
+			tangent := rho / s
+			turn := (s*s - (x-nu)*(x+nu) + rho*rho) / s
+			step = (theta - math.Atan(tangent)) * x / (s - turn/(1+tangent*tangent))
 		} else {
 			below, j := jPair(l, x)
 			r := 1 / x
