@@ -17,6 +17,10 @@
 // returns the mode as a materials.Medium whose index is the effective index, so
 // that group index, dispersion and zero-dispersion wavelength come from the same
 // functions that serve a glass.
+//
+// SolveVector and Step's Vector method do the same for the exact vector modes, TE, TM, HE
+// and EH, of any index difference (Snyder and Love 1983, chapter 12), each with its
+// distance from the LP mode that it belongs to.
 package modes
 
 import "errors"

@@ -247,20 +247,26 @@ func (m StepLP) CutoffWavelength(from, to float64) (float64, error) {
 		e := n1.Sub(n2).Mul(n1.Add(n2)).Quo(taylor.Variable(x).Square()).Scale(k * k)
 		return e[0] - 1, e[1], domain.Result(function, "V", e[0])
 	}
-	zeros, err := root.All(excess, from, to, 64)
-	if err != nil {
-		return 0, err
+	x, found, err := lastFall(excess, from, to)
+	if err == nil && !found {
+		err = fmt.Errorf("%s: %v from %v m to %v m: %w", function, m, from, to, ErrNoCutoff)
 	}
-	for i := len(zeros) - 1; i >= 0; i-- {
-		_, slope, err := excess(zeros[i])
-		if err != nil {
-			return 0, err
-		}
-		if slope < 0 {
-			return zeros[i], nil
+	return x, err
+}
+
+// cutoffCells is into how many cells the range is cut in the search for a cut-off.
+const cutoffCells = 64
+
+// lastFall returns the last zero of f between from and to that f crosses falling.
+func lastFall(f func(float64) (value, slope float64, err error), from, to float64) (x float64, found bool, err error) {
+	zeros, err := root.All(f, from, to, cutoffCells)
+	for i := len(zeros) - 1; i >= 0 && err == nil; i-- {
+		var slope float64
+		if _, slope, err = f(zeros[i]); err == nil && slope < 0 {
+			return zeros[i], true, nil
 		}
 	}
-	return 0, fmt.Errorf("%s: %v from %v m to %v m: %w", function, m, from, to, ErrNoCutoff)
+	return 0, false, err
 }
 
 func checkSpan(function string, from, to float64) error {
