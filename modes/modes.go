@@ -23,11 +23,15 @@
 // distance from the LP mode that it belongs to.
 package modes
 
-import "errors"
+import (
+	"errors"
+
+	"glassthread/modes/radial"
+)
 
 // ErrCutoff says that the mode asked for is not guided: V is at or below its
 // cut-off, or the wavelength is at or beyond its cut-off wavelength.
-var ErrCutoff = errors.New("the mode is not guided")
+var ErrCutoff = radial.ErrCutoff
 
 // ErrNoCutoff says that a mode has no cut-off in the range searched.
 var ErrNoCutoff = errors.New("no cut-off wavelength in the range")
