@@ -119,5 +119,36 @@ func (f Layered) section(function string, wavelength float64) (s section, err er
 		start = ends[i]
 	}
 	s.excess = at
+	// n of a layer, and what n^2 of a layer moved as a whole changes by.
+	n2 := s.cladding[0]
+	index := func(i int, r float64) float64 {
+		e, err := at(i, r)
+		if err != nil {
+			return 0 // at has answered there before
+		}
+		return effectiveOf(n2, e[0])
+	}
+	for i := range f.Layers {
+		outside := 0.0
+		if i+1 < len(f.Layers) {
+			e, err := at(i+1, ends[i])
+			if err != nil {
+				return s, err
+			}
+			outside = e[0]
+		}
+		e, err := at(i, ends[i])
+		if err != nil {
+			return s, err
+		}
+		s.radii = append(s.radii, change{edge: i, jump: (e[0] - outside) / s.radius})
+		s.indices = append(s.indices, change{inside: func(piece int, r float64) float64 {
+			if piece != i {
+				return 0
+			}
+			return 2 * index(i, r)
+		}})
+	}
+	s.indices = append(s.indices, change{cladding: 2 * n2})
 	return s, nil
 }

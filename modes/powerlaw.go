@@ -51,15 +51,22 @@ func (f PowerLaw) section(function string, wavelength float64) (s section, err e
 	}
 	contrast := n1.Sub(n2).Mul(n1.Add(n2))
 	alpha := f.Alpha
+	c, a, b := contrast[0], n1[0], n2[0]
 	return section{
 		radius:   f.Radius,
 		cladding: n2,
 		excess: func(_ int, r float64) (taylor.Series, error) {
 			return contrast.Scale(oneLessPower(r, alpha)), nil
 		},
-		pieces: []radial.Piece{{From: 0, To: 1, Graded: alpha != math.Trunc(alpha)}},
-		// On the axis.
-		highest: contrast[0],
+		pieces:  []radial.Piece{{From: 0, To: 1, Graded: alpha != math.Trunc(alpha)}},
+		highest: c, // on the axis
+		radii: []change{{inside: func(_ int, r float64) float64 {
+			return c * alpha / f.Radius * (1 - oneLessPower(r, alpha))
+		}}},
+		indices: []change{
+			{inside: func(_ int, r float64) float64 { return 2 * a * oneLessPower(r, alpha) }},
+			{inside: func(_ int, r float64) float64 { return 2 * b * (1 - oneLessPower(r, alpha)) }, cladding: 2 * b},
+		},
 	}, nil
 }
 

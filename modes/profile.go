@@ -28,6 +28,10 @@ type section struct {
 	excess   func(piece int, r float64) (taylor.Series, error)
 	pieces   []radial.Piece // F not yet set
 	highest  float64        // value of excess, over the whole profile
+
+	// What moves n^2: the outer radius of each layer, and the index of each and of the
+	// cladding.
+	radii, indices []change
 }
 
 // radialProblem is a section in pure numbers. The pieces' functions leave the first error
@@ -136,9 +140,13 @@ func (m RadialLP) Taylor(wavelength float64) (taylor.Series, error) {
 func (p *radialProblem) effective(lambda taylor.Series) taylor.Series {
 	above := lambda.Quo(p.scale)
 	n := p.cladding.Square().Add(above).Sqrt()
-	n2 := p.cladding[0]
-	n[0] = n2 + above[0]/(n2+math.Sqrt(n2*n2+above[0]))
+	n[0] = effectiveOf(p.cladding[0], above[0])
 	return n
+}
+
+// effectiveOf returns sqrt(n2^2 + above), formed about n2.
+func effectiveOf(n2, above float64) float64 {
+	return n2 + above/(n2+math.Sqrt(n2*n2+above))
 }
 
 // GuidedRadial is one entry of the list of guided LP modes of a radial profile.

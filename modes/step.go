@@ -102,8 +102,7 @@ func (f Step) Guided(wavelength float64) ([]Guided, error) {
 
 // effectiveIndex returns sqrt(n2^2 + b (n1^2 - n2^2)), formed about n2.
 func effectiveIndex(n1, n2, b float64) float64 {
-	d := b * (n1 - n2) * (n1 + n2)
-	return n2 + d/(n2+math.Sqrt(n2*n2+d))
+	return effectiveOf(n2, b*(n1-n2)*(n1+n2))
 }
 
 // StepLP is an LP mode of a step-index fibre. It is a materials.Medium: its index is

@@ -12,7 +12,8 @@ type row [inner]float64
 // transformation that diagonalises it to the given rows: a row x becomes x U. It is
 // Householder's reduction to tridiagonal form and the implicit QL method (Golub and Van
 // Loan, Matrix Computations, 4th ed., 8.3), where only what is asked for is rotated, as
-// in Golub and Welsch's way to quadrature rules. The matrix is overwritten.
+// in Golub and Welsch's way to quadrature rules. Only the lower triangle
+// is read; the matrix is overwritten.
 func diagonalise(a *square, rows []row) (d row) {
 	var e row // e[i] couples i and i+1
 	for k := 0; k < inner-2; k++ {
@@ -32,21 +33,25 @@ func diagonalise(a *square, rows []row) (d row) {
 		}
 		beta := 2 / (v[k+1]*v[k+1] + norm2)
 		// A <- A - v q' - q v', q = p - (beta/2)(p'v) v, p = beta A v.
+		for i := k + 1; i < inner; i++ {
+			sum, x := 0.0, v[i]
+			r := &a[i]
+			for j := k + 1; j < i; j++ {
+				sum += r[j] * v[j]
+				p[j] += r[j] * x
+			}
+			p[i] += sum + r[i]*x
+		}
 		dot := 0.0
 		for i := k + 1; i < inner; i++ {
-			sum := 0.0
-			for j := k + 1; j < inner; j++ {
-				sum += a[i][j] * v[j]
-			}
-			p[i] = beta * sum
+			p[i] *= beta
 			dot += p[i] * v[i]
 		}
 		for i := k + 1; i < inner; i++ {
 			p[i] -= beta / 2 * dot * v[i]
-		}
-		for i := k + 1; i < inner; i++ {
-			for j := k + 1; j < inner; j++ {
-				a[i][j] -= v[i]*p[j] + p[i]*v[j]
+			r := &a[i]
+			for j := k + 1; j <= i; j++ {
+				r[j] -= v[i]*p[j] + p[i]*v[j]
 			}
 		}
 		a[k+1][k] = alpha
@@ -77,7 +82,7 @@ func diagonalise(a *square, rows []row) (d row) {
 			}
 			// Wilkinson's shift.
 			g := (d[l+1] - d[l]) / (2 * e[l])
-			g = d[m] - d[l] + e[l]/(g+math.Copysign(math.Hypot(g, 1), g))
+			g = d[m] - d[l] + e[l]/(g+math.Copysign(math.Sqrt(g*g+1), g))
 			s, c, p := 1.0, 1.0, 0.0
 			i := m - 1
 			for ; i >= l; i-- {

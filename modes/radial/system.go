@@ -29,7 +29,7 @@ func (e *element) condense(l int, v float64, keep bool) (c condensed) {
 		c.scale[i] = 1 / math.Sqrt(e.mass[i+1])
 	}
 	for i := range inner {
-		for j := range inner {
+		for j := 0; j <= i; j++ {
 			s[i][j] = e.stiff[i+1][j+1] * c.scale[i] * c.scale[j]
 		}
 		r := e.r[i+1]
