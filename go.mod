@@ -2,10 +2,10 @@ module glassthread
 
 go 1.24.0
 
-require github.com/stretchr/testify v1.12.1
-
 require (
-	github.com/scientificgo/special v0.0.2 // indirect
-	go.yaml.in/yaml/v3 v3.0.5 // indirect
-	gonum.org/v1/gonum v0.17.0 // indirect
+	github.com/scientificgo/special v0.0.2
+	github.com/stretchr/testify v1.12.1
+	gonum.org/v1/gonum v0.17.0
 )
+
+require go.yaml.in/yaml/v3 v3.0.5 // indirect

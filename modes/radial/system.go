@@ -12,12 +12,10 @@ import (
 //
 //	T_aa = aa + lambda ma - sum a_i^2/(theta_i + lambda), and likewise bb and ab.
 type condensed struct {
-	theta, a, b         row
-	aa, bb, ab, ma, mb  float64
-	lowest              float64 // of theta
-	rows                []row   // the transformation, if it was asked for
-	scale               row     // 1/sqrt(mass) of the inner nodes
-	potentialA, potentB float64
+	theta, a, b        row
+	aa, bb, ab, ma, mb float64
+	rows               []row // the transformation, if it was asked for
+	scale              row   // 1/sqrt(mass) of the inner nodes
 }
 
 // condense eliminates the inside of an element.
