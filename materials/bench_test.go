@@ -26,6 +26,8 @@ func TestNoAllocation(t *testing.T) {
 		"SilicaAt":                 func() { _, err = SilicaAt(300) },
 		"SilicaThermoOptic.Change": func() { _, err = SilicaThermoOptic{}.Change(1e-6, 290, 300) },
 		"LinearThermoOptic.Change": func() { _, err = WaterThermoOptic().Change(1e-6, 290, 300) },
+		"GermaniaSilica Change":    func() { _, err = GermaniaSilicaThermoOptic{0.05}.Change(1e-6, 290, 300) },
+		"GasThermoOptic.Change":    func() { _, err = AirThermoOptic().Change(1e-6, 290, 300) },
 	} {
 		assert.Zero(t, testing.AllocsPerRun(100, f), name)
 		assert.NoError(t, err)

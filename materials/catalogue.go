@@ -24,37 +24,80 @@ var ErrNoThermoOptic = errors.New("no thermo-optic behaviour is known")
 type Entry struct {
 	Name        string // what Lookup finds it by
 	Composition string
-	Wavelengths Range       // vacuum wavelengths (m)
-	Fractions   Range       // mole fraction of the dopant; the zero Range when fixed
-	Temperature float64     // at which the index holds (K)
-	ThermoOptic ThermoOptic // nil where none is known here
-	Source      Source
+	Wavelengths Range   // vacuum wavelengths (m)
+	Fractions   Range   // mole fraction of the dopant; the zero Range when fixed
+	Temperature float64 // at which the index holds (K)
+	// Temperatures is where GlassAt answers (K): Temperature alone where no behaviour
+	// with temperature is known here.
+	Temperatures Range
+	Source       Source
 
-	build func(fraction float64) (Medium, error)
+	build     func(fraction float64) (Medium, error)
+	behaviour func(fraction float64) ThermoOptic // nil where none is known, its result too
 }
 
 // Glass returns the medium of the given mole fraction, which must be 0 for an
 // entry of fixed composition. The error of a fraction out of range matches
 // ErrRange.
 func (e Entry) Glass(fraction float64) (Medium, error) {
-	if e.build == nil {
-		return nil, fmt.Errorf("materials.Entry.Glass: the entry is empty: %w", ErrUnknown)
-	}
-	if e.Fractions == (Range{}) && fraction != 0 {
-		return nil, &domain.Error{Func: "materials.Entry.Glass", Argument: "fraction", Value: fraction,
-			Allowed: "0, since the composition of " + e.Name + " is fixed", Kind: ErrRange}
-	}
-	if err := e.Fractions.check("materials.Entry.Glass", "fraction", fraction, "mole fraction"); err != nil {
+	if err := e.check("materials.Entry.Glass", fraction); err != nil {
 		return nil, err
 	}
 	return e.build(fraction)
 }
 
+func (e Entry) check(function string, fraction float64) error {
+	if e.build == nil {
+		return fmt.Errorf("%s: the entry is empty: %w", function, ErrUnknown)
+	}
+	if e.Fractions == (Range{}) && fraction != 0 {
+		return &domain.Error{Func: function, Argument: "fraction", Value: fraction,
+			Allowed: "0, since the composition of " + e.Name + " is fixed", Kind: ErrRange}
+	}
+	return e.Fractions.check(function, "fraction", fraction, "mole fraction")
+}
+
+// ThermoOptic returns how the glass of the given mole fraction behaves with
+// temperature; the fraction must be 0 for an entry of fixed composition. The error
+// matches ErrRange when the fraction is out of range, and ErrNoThermoOptic where no
+// behaviour is known here.
+func (e Entry) ThermoOptic(fraction float64) (ThermoOptic, error) {
+	return e.thermoOptic("materials.Entry.ThermoOptic", fraction)
+}
+
+func (e Entry) thermoOptic(function string, fraction float64) (ThermoOptic, error) {
+	if err := e.check(function, fraction); err != nil {
+		return nil, err
+	}
+	if e.behaviour == nil {
+		return nil, fmt.Errorf("%s: %s: %w", function, e.Name, ErrNoThermoOptic)
+	}
+	if b := e.behaviour(fraction); b != nil {
+		return b, nil
+	}
+	return nil, &domain.Error{Func: function, Argument: "fraction", Value: fraction,
+		Allowed: fmt.Sprintf("at most %v for %s", fluorineLimit, e.Name), Kind: ErrNoThermoOptic}
+}
+
+// fluorineLimit is the mole fraction of fluorine up to which silica's behaviour with
+// temperature is taken, the most that claddings and trenches hold.
+const fluorineLimit = 0.03
+
 // GlassAt returns the medium of the given mole fraction at a temperature (K), by the
-// entry's ThermoOptic, which for doped silica is that of pure silica and answers from
-// 0.23 to 3.37 um only. The error matches ErrRange when the temperature is out of
-// range, and ErrNoThermoOptic when it is not the entry's own and no behaviour is
-// known.
+// entry's ThermoOptic:
+//
+//   - pure silica as Ghosh et al. (1994) measured it, see SilicaThermoOptic;
+//   - germania-silica and germania by the sum in proportion of silica's behaviour and
+//     germania's, see GermaniaSilicaThermoOptic;
+//   - fluorine-silica by silica's, up to a mole fraction of 0.03 and to within some 10 %;
+//   - air, water and PMMA by their own, see AirThermoOptic, WaterThermoOptic and
+//     PMMAThermoOptic;
+//   - the other glasses, those with boron or phosphorus among them, at the entry's own
+//     Temperature only.
+//
+// Warmed glasses answer from 0.23 to 3.37 um at most. The error matches ErrRange when
+// the temperature is outside Temperatures, and ErrNoThermoOptic when it is not the
+// entry's own and no behaviour is known. The fraction is that of Glass.
 func (e Entry) GlassAt(fraction, temperature float64) (Medium, error) {
 	const function = "materials.Entry.GlassAt"
 	if err := domain.Positive(function, "temperature", temperature, "K"); err != nil {
@@ -64,18 +107,19 @@ func (e Entry) GlassAt(fraction, temperature float64) (Medium, error) {
 	if err != nil || temperature == e.Temperature {
 		return g, err
 	}
-	if e.ThermoOptic == nil {
+	if e.behaviour == nil {
 		return nil, &domain.Error{Func: function, Argument: "temperature", Value: temperature,
-			Allowed: fmt.Sprintf("%v (K) for %s", e.Temperature, e.Name), Kind: ErrNoThermoOptic}
+			Allowed: fmt.Sprintf("%.10g (K) for %s", e.Temperature, e.Name), Kind: ErrNoThermoOptic}
 	}
-	if _, err := e.ThermoOptic.Change(e.anyWavelength(), e.Temperature, temperature); err != nil {
+	behaviour, err := e.thermoOptic(function, fraction)
+	if err != nil {
 		return nil, err
 	}
-	return Warmed{Glass: g, ThermoOptic: e.ThermoOptic, Reference: e.Temperature, Temperature: temperature}, nil
+	if err := e.Temperatures.check(function, "temperature", temperature, "K"); err != nil {
+		return nil, err
+	}
+	return Warmed{Glass: g, ThermoOptic: behaviour, Reference: e.Temperature, Temperature: temperature}, nil
 }
-
-// anyWavelength is one within range, to try a behaviour at.
-func (e Entry) anyWavelength() float64 { return math.Sqrt(e.Wavelengths.From * e.Wavelengths.To) }
 
 // FractionForIndex returns the mole fraction at which the glass has the given
 // index at a vacuum wavelength (m), to the last place or two that the index
@@ -91,7 +135,10 @@ func (e Entry) FractionForIndex(index, wavelength float64) (float64, error) {
 // FractionForDelta returns the mole fraction at which the glass has the given
 // relative index difference (n^2 - n0^2)/(2 n^2) over the undoped glass of index
 // n0, at a vacuum wavelength (m). It is below zero for a dopant that lowers the
-// index. The error matches ErrNoFraction when no fraction in range does.
+// index. The fraction is good to 2e-14 absolute, which is what an index known to its
+// last place leaves of it, and 3e-15 for germania at 1.55 um. So relative to itself it loses
+// digits as 1/delta: 1e-13 at a delta of 0.003, 2e-10 at 1e-6. The error matches
+// ErrNoFraction when no fraction in range does.
 func (e Entry) FractionForDelta(delta, wavelength float64) (float64, error) {
 	if err := domain.Finite("materials.Entry.FractionForDelta", "delta", delta, ""); err != nil {
 		return 0, err
@@ -154,27 +201,43 @@ func Lookup(name string) (Entry, error) {
 // source. The slice is the caller's own.
 func Catalogue() []Entry {
 	room := Celsius(20)
-	fixed := func(g Sellmeier, name, composition string, behaviour ThermoOptic) Entry {
-		return Entry{Name: name, Composition: composition, Wavelengths: g.Range, Source: g.Source,
-			Temperature: room, ThermoOptic: behaviour,
+	fixed := func(g Sellmeier, name, composition string, temperatures Range, b ThermoOptic) Entry {
+		e := Entry{Name: name, Composition: composition, Wavelengths: g.Range, Source: g.Source,
+			Temperature: room, Temperatures: temperatures,
 			build: func(float64) (Medium, error) { return g, nil }}
+		if b != nil {
+			e.behaviour = func(float64) ThermoOptic { return b }
+		}
+		return e
+	}
+	unknown := func(g Sellmeier, name, composition string, temperature float64) Entry {
+		e := fixed(g, name, composition, Range{temperature, temperature}, nil)
+		e.Temperature = temperature
+		return e
 	}
 	silica := SilicaThermoOptic{}
-	air, pmma := Air(), PMMA()
+	doped := func(x float64) ThermoOptic { return GermaniaSilicaThermoOptic{x} }
+	air, pmma, warmAir, warmWater, warmPMMA := Air(), PMMA(), AirThermoOptic(), WaterThermoOptic(), PMMAThermoOptic()
 	all := []Entry{
-		fixed(FusedSilica(), "silica", "SiO2", silica),
-		fixed(SilicaByGroupIndex(), "silica-by-group-index", "SiO2", silica),
-		fixed(ghoshSilica(room), "silica-with-temperature", "SiO2", silica),
-		fixed(Germania(), "germania", "GeO2", nil),
+		fixed(FusedSilica(), "silica", "SiO2", ghoshTemperatures, silica),
+		fixed(SilicaByGroupIndex(), "silica-by-group-index", "SiO2", ghoshTemperatures, silica),
+		fixed(ghoshSilica(room), "silica-with-temperature", "SiO2", ghoshTemperatures, silica),
+		fixed(Germania(), "germania", "GeO2", ghoshTemperatures, doped(1)),
 		{Name: "germania-silica", Composition: "x GeO2 + (1 - x) SiO2", Wavelengths: Germania().Range,
-			Fractions: Range{0, 1}, Source: fleming, Temperature: room, ThermoOptic: silica,
-			build: func(x float64) (Medium, error) { return GermaniaSilica(x) }},
+			Fractions: anyFraction, Source: fleming, Temperature: room, Temperatures: ghoshTemperatures,
+			build: func(x float64) (Medium, error) { return GermaniaSilica(x) }, behaviour: doped},
 		{Name: "germania-silica-by-sunak", Composition: "x GeO2 + (1 - x) SiO2", Wavelengths: sunakRange,
-			Fractions: sunakFractions, Source: sunak, Temperature: room, ThermoOptic: silica,
-			build: func(x float64) (Medium, error) { return GermaniaSilicaBySunak(x) }},
+			Fractions: sunakFractions, Source: sunak, Temperature: room, Temperatures: ghoshTemperatures,
+			build: func(x float64) (Medium, error) { return GermaniaSilicaBySunak(x) }, behaviour: doped},
 		{Name: "fluorine-silica", Composition: "x F + (1 - x) SiO2", Wavelengths: sunakRange,
-			Fractions: sunakFractions, Source: sunak, Temperature: room, ThermoOptic: silica,
-			build: func(x float64) (Medium, error) { return FluorineSilica(x) }},
+			Fractions: sunakFractions, Source: sunak, Temperature: room, Temperatures: ghoshTemperatures,
+			build: func(x float64) (Medium, error) { return FluorineSilica(x) },
+			behaviour: func(x float64) ThermoOptic {
+				if x > fluorineLimit {
+					return nil
+				}
+				return silica
+			}},
 	}
 	for _, g := range MeasuredGlasses() {
 		composition := g.Composition
@@ -182,23 +245,28 @@ func Catalogue() []Entry {
 			composition = fmt.Sprintf("%s, mole fraction %v", g.Composition, g.Fraction)
 		}
 		name := strings.NewReplacer(" ", "-", "%", "").Replace(g.Name) + "-measured"
-		all = append(all, fixed(g.Sellmeier, name, composition, silica))
-	}
-	warmed := func(e Entry, celsius float64) Entry {
-		e.Temperature = Celsius(celsius)
-		return e
+		switch g.dopant() {
+		case "", "F":
+			all = append(all, fixed(g.Sellmeier, name, composition, ghoshTemperatures, silica))
+		case "GeO2":
+			all = append(all, fixed(g.Sellmeier, name, composition, ghoshTemperatures, doped(g.Fraction)))
+		default: // boron and phosphorus: far from silica, and not known here
+			all = append(all, unknown(g.Sellmeier, name, composition, room))
+		}
 	}
 	return append(all,
 		Entry{Name: "air", Composition: "dry air", Wavelengths: air.Range, Source: air.Source,
-			Temperature: Celsius(15),
-			build:       func(float64) (Medium, error) { return air, nil }},
-		fixed(Water(), "water", "H2O", WaterThermoOptic()),
+			Temperature: airTemperature, Temperatures: warmAir.Temperatures,
+			build:     func(float64) (Medium, error) { return air, nil },
+			behaviour: func(float64) ThermoOptic { return warmAir }},
+		fixed(Water(), "water", "H2O", warmWater.Temperatures, warmWater),
 		Entry{Name: "pmma", Composition: "poly(methyl methacrylate)", Wavelengths: pmma.Range, Source: pmma.Source,
-			Temperature: Celsius(20.1), ThermoOptic: PMMAThermoOptic(),
-			build: func(float64) (Medium, error) { return pmma, nil }},
-		fixed(PMMAByOscillator(), "pmma-by-oscillator", "poly(methyl methacrylate)", PMMAThermoOptic()),
-		fixed(Polycarbonate(), "polycarbonate", "polycarbonate", nil),
-		fixed(FluorideGlass(), "fluoride-glass", "ZrF4-BaF2-LaF3-AlF3-NaF", nil),
-		warmed(fixed(ArsenicTrisulfide(), "arsenic-trisulfide", "As2S3", nil), 25),
+			Temperature: Celsius(20.1), Temperatures: warmPMMA.Temperatures,
+			build:     func(float64) (Medium, error) { return pmma, nil },
+			behaviour: func(float64) ThermoOptic { return warmPMMA }},
+		fixed(PMMAByOscillator(), "pmma-by-oscillator", "poly(methyl methacrylate)", warmPMMA.Temperatures, warmPMMA),
+		unknown(Polycarbonate(), "polycarbonate", "polycarbonate", room),
+		unknown(FluorideGlass(), "fluoride-glass", "ZrF4-BaF2-LaF3-AlF3-NaF", room),
+		unknown(ArsenicTrisulfide(), "arsenic-trisulfide", "As2S3", Celsius(25)),
 	)
 }

@@ -76,6 +76,25 @@ func TestSourcesMarkMemory(t *testing.T) {
 	}
 	assert.True(t, PMMAThermoOptic().Source.FromMemory)
 	assert.True(t, WaterThermoOptic().Source.FromMemory)
+	assert.True(t, GermaniaSilicaThermoOptic{}.Source().FromMemory)
+}
+
+// Solids are measured in air; the two fluids are relative to vacuum. The claim about
+// water is what its agreement with handbooks in air says, TestHandbookIndices.
+func TestSourcesNameTheirReference(t *testing.T) {
+	for _, e := range Catalogue() {
+		assert.Equal(t, e.Name != "air" && e.Name != "water", e.Source.InAir, e.Name)
+		if !e.Source.InAir {
+			assert.Contains(t, e.Source.Conditions, "vacuum", e.Name)
+		} else {
+			assert.Contains(t, e.Source.Conditions, "air", e.Name)
+		}
+	}
+	// The error of mixing the two that Air, Water and the package name.
+	air := indexAt(t, Air(), 1.55e-6)
+	assert.InDelta(t, 2.7e-4, air-1, 0.05e-4)
+	silica := indexAt(t, FusedSilica(), 1.55e-6)
+	assert.InDelta(t, 4e-4, silica*air-silica, 0.1e-4)
 }
 
 // Every entry answers over the whole of its ranges, ends included, with the direct
@@ -119,7 +138,7 @@ func TestCatalogueRanges(t *testing.T) {
 }
 
 func TestGlassAt(t *testing.T) {
-	known := 0
+	var unknown []string
 	for _, e := range Catalogue() {
 		same, err := e.GlassAt(e.Fractions.To, e.Temperature)
 		require.NoError(t, err, e.Name)
@@ -134,27 +153,119 @@ func TestGlassAt(t *testing.T) {
 		}
 		_, err = e.GlassAt(1.5, e.Temperature)
 		assert.ErrorIs(t, err, ErrRange, e.Name)
-		warm, err := e.GlassAt(e.Fractions.To, e.Temperature+5)
-		if e.ThermoOptic == nil {
+		assert.True(t, e.Temperatures.Contains(e.Temperature), e.Name)
+		fraction := e.Fractions.To
+		if e.Name == "fluorine-silica" {
+			fraction = 0.03
+		}
+		behaviour, err := e.ThermoOptic(fraction)
+		if err != nil {
+			unknown = append(unknown, e.Name)
 			assert.ErrorIs(t, err, ErrNoThermoOptic, e.Name)
+			assert.ErrorContains(t, err, e.Name)
+			assert.Equal(t, Range{e.Temperature, e.Temperature}, e.Temperatures, e.Name)
+			_, err = e.GlassAt(fraction, e.Temperature+5)
+			assert.ErrorIs(t, err, ErrNoThermoOptic, e.Name)
+			assert.ErrorContains(t, err, "materials.Entry.GlassAt: temperature = ")
 			continue
 		}
-		known++
-		require.NoError(t, err, e.Name)
-		change, err := e.ThermoOptic.Change(x, e.Temperature, e.Temperature+5)
+		g, err = e.Glass(fraction)
 		require.NoError(t, err)
-		assert.NotZero(t, change)
-		assert.Equal(t, seriesAt(t, g, x).Add(change), seriesAt(t, warm, x), e.Name)
-		_, err = e.GlassAt(0, 5000)
+		for _, kelvin := range []float64{e.Temperatures.From, e.Temperature + 5, e.Temperatures.To} {
+			warm, err := e.GlassAt(fraction, kelvin)
+			require.NoError(t, err, e.Name)
+			change, err := behaviour.Change(x, e.Temperature, kelvin)
+			require.NoError(t, err)
+			assert.NotZero(t, change)
+			assert.Equal(t, seriesAt(t, g, x).Add(change), seriesAt(t, warm, x), e.Name)
+		}
+		for _, kelvin := range []float64{math.Nextafter(e.Temperatures.From, 0), math.Nextafter(e.Temperatures.To, 1e9), 5000} {
+			_, err = e.GlassAt(fraction, kelvin)
+			assert.ErrorIs(t, err, ErrRange, e.Name)
+			var refusal *domain.Error
+			require.ErrorAs(t, err, &refusal)
+			assert.Equal(t, "temperature", refusal.Argument)
+		}
+		_, err = e.ThermoOptic(1.5)
 		assert.ErrorIs(t, err, ErrRange, e.Name)
 	}
-	assert.Equal(t, 6+len(MeasuredGlasses())+3, known) // silicas and families, water, two PMMA
+	assert.Equal(t, []string{"phosphorus-silica-9.1-measured", "boron-silica-13.3-measured",
+		"polycarbonate", "fluoride-glass", "arsenic-trisulfide"}, unknown)
 	// The catalogue's silica with temperature is SilicaAt.
 	e, err := Lookup("silica-with-temperature")
 	require.NoError(t, err)
 	warm, err := e.GlassAt(0, Celsius(60))
 	require.NoError(t, err)
 	assert.InDelta(t, indexAt(t, asMedium[Sellmeier](t)(SilicaAt(Celsius(60))), 1.55e-6), indexAt(t, warm, 1.55e-6), 1e-15)
+}
+
+// dn/dT of doped silica at 1.55 um: silica's 1.07e-5 per K (Ghosh et al. 1994) and
+// germania's 1.94e-5 (both from memory) in proportion.
+func TestDopedSilicaWarms(t *testing.T) {
+	const x = 1.55e-6
+	rate := func(name string, fraction float64) float64 {
+		e, err := Lookup(name)
+		require.NoError(t, err)
+		cold, err := e.GlassAt(fraction, Celsius(15))
+		require.NoError(t, err)
+		warm, err := e.GlassAt(fraction, Celsius(25))
+		require.NoError(t, err)
+		return (indexAt(t, warm, x) - indexAt(t, cold, x)) / 10
+	}
+	silica := rate("silica", 0)
+	assert.InDelta(t, 1.07e-5, silica, 0.5e-7)
+	for _, c := range []struct {
+		name                 string
+		argument, moleOfGeO2 float64
+	}{
+		{"germania-silica", 0, 0}, {"germania-silica", 0.036, 0.036}, {"germania-silica", 0.5, 0.5},
+		{"germania-silica", 1, 1}, {"germania", 0, 1}, {"germania-silica-by-sunak", 0.1, 0.1},
+		{"germania-silica-3.1-measured", 0, 0.031}, {"germania-silica-13.5-measured", 0, 0.135},
+		{"fluorine-silica", 0.03, 0}, {"fluorine-silica-1-measured", 0, 0}, {"quenched-silica-measured", 0, 0},
+	} {
+		want := silica + c.moleOfGeO2*(1.94e-5-silica)
+		assert.InDelta(t, want, rate(c.name, c.argument), 1e-16, "%s, %v", c.name, c.argument)
+	}
+	// Pure germania by both names is one glass, in every derivative, warm or cold.
+	alone, err := Lookup("germania")
+	require.NoError(t, err)
+	family, err := Lookup("germania-silica")
+	require.NoError(t, err)
+	for _, celsius := range []float64{-60, 12, 20, 85} {
+		a, err := alone.GlassAt(0, Celsius(celsius))
+		require.NoError(t, err)
+		b, err := family.GlassAt(1, Celsius(celsius))
+		require.NoError(t, err)
+		got, want := seriesAt(t, b, x), seriesAt(t, a, x)
+		for k := range want {
+			assert.InEpsilon(t, want[k], got[k], 1e-13, "%v C, order %d", celsius, k)
+		}
+	}
+	// Above its limit fluorine-silica stays at its own temperature.
+	fluorine, err := Lookup("fluorine-silica")
+	require.NoError(t, err)
+	_, err = fluorine.GlassAt(0.031, Celsius(20))
+	assert.NoError(t, err)
+	_, err = fluorine.GlassAt(0.031, Celsius(21))
+	assert.ErrorIs(t, err, ErrNoThermoOptic)
+	assert.EqualError(t, err, "materials.Entry.GlassAt: fraction = 0.031: must be at most 0.03 for fluorine-silica (no thermo-optic behaviour is known)")
+}
+
+// The numerical aperture of a doped core in silica drifts with temperature by the
+// dopant: d(NA^2)/dT = 2 (n1 dn1/dT - n2 dn2/dT), with dn1/dT above dn2/dT by 0.036 of
+// the difference between germania's and silica's.
+func TestApertureDriftsWithTemperature(t *testing.T) {
+	core, err := Lookup("germania-silica")
+	require.NoError(t, err)
+	squared := func(celsius float64) float64 {
+		n1, err := core.GlassAt(0.036, Celsius(celsius))
+		require.NoError(t, err)
+		n2 := asMedium[Warmed](t)(Warmed{FusedSilica(), SilicaThermoOptic{}, Celsius(20), Celsius(celsius)}, nil)
+		a, b := indexAt(t, n1, 1.55e-6), indexAt(t, n2, 1.55e-6)
+		return (a - b) * (a + b)
+	}
+	const n1, n2, silica, dopant = 1.44943, 1.44402, 1.0655e-5, 0.036 * (1.94e-5 - 1.0655e-5)
+	assert.InEpsilon(t, 2*((n1-n2)*silica+n1*dopant), (squared(40)-squared(0))/40, 2e-3)
 }
 
 func TestLookup(t *testing.T) {
@@ -232,6 +343,27 @@ func TestFractionRoundTrip(t *testing.T) {
 	}
 	t.Logf("worst error of a mole fraction %.1e", worst)
 	assert.Less(t, worst, 2e-14) // an index known to 2e-16 over a slope of 0.05 or more
+}
+
+// Small index differences, as FractionForDelta documents. The fractions were computed by
+// mpmath at 40 digits from the decimals of Fleming (1984) and Malitson (1965) at 1.55 um:
+// findroot(lambda p: (n2(p) - n2(0))/(2*n2(p)) - delta, 10*delta), n2 the squared index.
+func TestFractionForSmallDelta(t *testing.T) {
+	e, err := Lookup("germania-silica")
+	require.NoError(t, err)
+	for _, c := range []struct{ delta, want, relative float64 }{
+		{0.003, 0.028964900384976919976, 1e-13},
+		{0.0057, 0.055339706728623367444, 1e-13},
+		{0.0001, 0.00095978548862337748272, 3e-12},
+		{1e-6, 9.5959164786497464188e-6, 3e-10},
+		{1e-8, 9.5958970983114263048e-8, 3e-8},
+		{1e-10, 9.5958969045084169264e-10, 3e-6},
+	} {
+		got, err := e.FractionForDelta(c.delta, 1.55e-6)
+		require.NoError(t, err)
+		assert.InDelta(t, c.want, got, 3e-15, "%v", c.delta)
+		assert.InEpsilon(t, c.want, got, c.relative, "%v", c.delta)
+	}
 }
 
 func TestFractionRefuses(t *testing.T) {

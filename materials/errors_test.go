@@ -28,6 +28,8 @@ func kinds(t testing.TB) map[string]Medium {
 		"Constant":      Constant(1.45),
 		"Warmed":        Warmed{doped, SilicaThermoOptic{}, Celsius(20), Celsius(60)},
 		"Warmed linear": Warmed{PMMA(), PMMAThermoOptic(), Celsius(20), Celsius(40)},
+		"Warmed doped":  Warmed{doped, GermaniaSilicaThermoOptic{0.01}, Celsius(20), Celsius(60)},
+		"Warmed gas":    Warmed{Air(), AirThermoOptic(), Celsius(15), Celsius(60)},
 		"own":           own(func(x float64) (taylor.Series, error) { return taylor.Series{1.5, -1e4, 1e10}, nil }),
 	}
 }
@@ -220,6 +222,12 @@ func TestRange(t *testing.T) {
 	}
 	err := r.check("materials.X", "wavelength", 3, "m")
 	assert.EqualError(t, err, "materials.X: wavelength = 3: must be from 1 to 2 (m) (outside the range of the glass's data)")
+	// No digits that the limit does not mean: Celsius(-60) is 213.14999999999998.
+	_, err = SilicaAt(20)
+	assert.EqualError(t, err, "materials.SilicaAt: temperature = 20: must be from 213.15 to 1101.15 (K) (outside the range of the glass's data)")
+	_, err = Index(FusedSilica().Extrapolate(Range{2e-6, 1e-6}), 1.5e-6)
+	assert.EqualError(t, err, "materials.Sellmeier: wavelength = 1.5e-06: must be in a range that is not empty: "+
+		"nothing lies from 2e-06 to 1e-06 (m) (outside the range of the glass's data)")
 }
 
 // Extrapolating is by name, gives another value, and leaves the formula alone.

@@ -185,11 +185,11 @@ func ExampleSource() {
 	source := materials.Germania().Source
 	fmt.Println(source.Citation)
 	fmt.Println(source.Conditions)
-	fmt.Println(source.FromMemory)
+	fmt.Println(source.FromMemory, source.InAir)
 	// Output:
 	// J. W. Fleming, Appl. Opt. 23, 4486 (1984); open record (CC0) of refractiveindex.info
 	// room temperature, in air
-	// false
+	// false true
 }
 
 // Handbook values of fused silica at 0.6328 and 1.064 um: 1.45702 and 1.44963 (from
@@ -531,7 +531,7 @@ func ExampleEntry_GlassAt() {
 	// Output:
 	//  2 C: 1.45407 <nil>
 	// 22 C: 1.45429 <nil>
-	// 60 C: 1.45469 <nil>
+	// 60 C: 1.45471 <nil>
 	// true
 }
 
@@ -643,7 +643,8 @@ func ExampleTable_Source() {
 	// Output: bench 3, invented
 }
 
-// A doped core at 60 C: its index at 20 C plus what silica gains.
+// A doped core at 60 C: its index at 20 C plus what silica and germania gain, in
+// proportion.
 func ExampleWarmed() {
 	core, err := materials.GermaniaSilica(0.05)
 	if err != nil {
@@ -651,7 +652,7 @@ func ExampleWarmed() {
 	}
 	warm := materials.Warmed{
 		Glass:       core,
-		ThermoOptic: materials.SilicaThermoOptic{},
+		ThermoOptic: materials.GermaniaSilicaThermoOptic{MoleFraction: 0.05},
 		Reference:   materials.Celsius(20),
 		Temperature: materials.Celsius(60),
 	}
@@ -661,7 +662,7 @@ func ExampleWarmed() {
 	}
 	// Output:
 	// 1.45153 <nil>
-	// 1.45195 <nil>
+	// 1.45197 <nil>
 }
 
 func ExampleWarmed_Taylor() {
@@ -688,6 +689,80 @@ func ExampleThermoOptic() {
 		Reference: 300, Temperature: 350}, 1*um)
 	fmt.Printf("%.4f %v\n", n, err)
 	// Output: 1.5005 <nil>
+}
+
+// A core of 10 % of germania gains 8 % more per kelvin than its silica cladding.
+func ExampleGermaniaSilicaThermoOptic() {
+	for _, fraction := range []float64{0, 0.1, 1} {
+		b := materials.GermaniaSilicaThermoOptic{MoleFraction: fraction}
+		change, err := b.Change(1.55*um, materials.Celsius(20), materials.Celsius(21))
+		fmt.Printf("%.3e per K %v\n", change.Value(), err)
+	}
+	// Output:
+	// 1.066e-05 per K <nil>
+	// 1.153e-05 per K <nil>
+	// 1.940e-05 per K <nil>
+}
+
+func ExampleGermaniaSilicaThermoOptic_Change() {
+	_, err := materials.GermaniaSilicaThermoOptic{MoleFraction: 5}.Change(1.55*um, 290, 300) // meant in per cent
+	fmt.Println(err)
+	// Output: materials.GermaniaSilicaThermoOptic: MoleFraction = 5: must be from 0 to 1 (mole fraction) (outside the range of the glass's data)
+}
+
+func ExampleGermaniaSilicaThermoOptic_Source() {
+	source := materials.GermaniaSilicaThermoOptic{}.Source()
+	fmt.Println(source.FromMemory)
+	// Output: true
+}
+
+func ExampleGermaniaSilicaThermoOptic_Wavelengths() {
+	fmt.Println(materials.GermaniaSilicaThermoOptic{}.Wavelengths())
+	// Output: {2.3e-07 3.37e-06}
+}
+
+// Carbon dioxide, an invented fit: n - 1 follows the density.
+func ExampleGasThermoOptic() {
+	gas := materials.Gas{Terms: [6]materials.Term{{A: 4.2e-4, L: 0.09 * um}}}
+	b := materials.GasThermoOptic{Gas: gas, Reference: 300}
+	n, err := materials.Index(materials.Warmed{Glass: gas, ThermoOptic: b, Reference: 300, Temperature: 600}, 1*um)
+	fmt.Printf("%.3e %v\n", n-1, err)
+	// Output: 2.117e-04 <nil>
+}
+
+func ExampleGasThermoOptic_Change() {
+	change, err := materials.AirThermoOptic().Change(1.55*um, materials.Celsius(15), materials.Celsius(16))
+	fmt.Printf("%.2e %v\n", change.Value(), err)
+	// Output: -9.45e-07 <nil>
+}
+
+func ExampleGasThermoOptic_Wavelengths() {
+	fmt.Println(materials.AirThermoOptic().Wavelengths())
+	// Output: {2.3e-07 1.69e-06}
+}
+
+// n - 1 of air is 2.926e-4 at 0 C and 589 nm (common handbook value, from memory).
+func ExampleAirThermoOptic() {
+	cold := materials.Warmed{Glass: materials.Air(), ThermoOptic: materials.AirThermoOptic(),
+		Reference: materials.Celsius(15), Temperature: materials.Celsius(0)}
+	n, err := materials.Index(cold, 589.3*nm)
+	fmt.Printf("%.2e %v\n", n-1, err)
+	// Output: 2.92e-04 <nil>
+}
+
+func ExampleEntry_ThermoOptic() {
+	e, err := materials.Lookup("germania-silica")
+	if err != nil {
+		log.Fatal(err)
+	}
+	b, err := e.ThermoOptic(0.05)
+	fmt.Println(b, err)
+	e, _ = materials.Lookup("polycarbonate")
+	_, err = e.ThermoOptic(0)
+	fmt.Println(errors.Is(err, materials.ErrNoThermoOptic))
+	// Output:
+	// {0.05} <nil>
+	// true
 }
 
 func ExampleSilicaThermoOptic() {

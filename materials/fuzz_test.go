@@ -140,7 +140,10 @@ func FuzzThermoOptic(f *testing.F) {
 		for _, behaviour := range []ThermoOptic{
 			LinearThermoOptic{First: first, Second: second, About: about, Temperatures: Range{low, high}},
 			LinearThermoOptic{First: first, Second: second, About: about},
-			WaterThermoOptic(), PMMAThermoOptic(), SilicaThermoOptic{},
+			WaterThermoOptic(), PMMAThermoOptic(), SilicaThermoOptic{}, AirThermoOptic(),
+			GermaniaSilicaThermoOptic{first}, GermaniaSilicaThermoOptic{math.Abs(math.Mod(first, 1))},
+			GasThermoOptic{Gas: Air(), Reference: about, Temperatures: Range{low, high}},
+			GasThermoOptic{Gas: Gas{Terms: [6]Term{{first, second}}}, Reference: about},
 		} {
 			change, err := behaviour.Change(wavelength, from, to)
 			if err == nil && !change.Finite() {
@@ -209,8 +212,14 @@ func FuzzCatalogue(f *testing.F) {
 		}
 		if g, err := e.GlassAt(fraction, temperature); err == nil {
 			sound(t, g, wavelength)
+			if !e.Temperatures.Contains(temperature) {
+				t.Fatalf("%s at %v K", e.Name, temperature)
+			}
 		} else {
 			said(t, err)
+		}
+		if b, err := e.ThermoOptic(fraction); (err == nil) != (b != nil) {
+			t.Fatal(e.Name, b, err)
 		}
 		for _, answer := range []func() (float64, error){
 			func() (float64, error) { return e.FractionForIndex(index, wavelength) },

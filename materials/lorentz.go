@@ -1,7 +1,6 @@
 package materials
 
 import (
-	"glassthread/materials/domain"
 	"glassthread/materials/taylor"
 )
 
@@ -23,10 +22,7 @@ type LorentzLorenz struct {
 // outside Range (the error matches ErrRange) and where the formula gives no real
 // index.
 func (g LorentzLorenz) Taylor(wavelength float64) (taylor.Series, error) {
-	if err := domain.Positive("materials.LorentzLorenz", "wavelength", wavelength, "m"); err != nil {
-		return taylor.Series{}, err
-	}
-	if err := g.Range.check("materials.LorentzLorenz", "wavelength", wavelength, "m"); err != nil {
+	if err := g.Range.checkWavelength("materials.LorentzLorenz", wavelength); err != nil {
 		return taylor.Series{}, err
 	}
 	y := oscillators(&g.Terms, wavelength)
@@ -35,7 +31,8 @@ func (g LorentzLorenz) Taylor(wavelength float64) (taylor.Series, error) {
 }
 
 // Extrapolate returns the same glass with the range of wavelengths (m) that the
-// caller answers for. The data do not vouch for anything outside Range.
+// caller answers for. The data do not vouch for anything outside Range. An empty range,
+// From above To, refuses every wavelength.
 func (g LorentzLorenz) Extrapolate(wavelengths Range) LorentzLorenz {
 	g.Range = wavelengths
 	return g
@@ -43,8 +40,9 @@ func (g LorentzLorenz) Extrapolate(wavelengths Range) LorentzLorenz {
 
 var sunak = Source{
 	Citation:   "H. R. D. Sunak and S. P. Bastien, IEEE Photon. Technol. Lett. 1, 142 (1989)",
-	Conditions: "room temperature; dopant mole fraction below 0.2, 0.6 to 1.8 um",
+	Conditions: "room temperature; dopant mole fraction below 0.2, 0.6 to 1.8 um; relative to air, as is the silica that it meets undoped",
 	FromMemory: true,
+	InAir:      true,
 }
 
 var (

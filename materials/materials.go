@@ -7,9 +7,15 @@
 // a glass of their own implements its one method and every package works on it.
 //
 // Wavelengths are vacuum wavelengths in metres, temperatures are in kelvin (see
-// Celsius), compositions are mole fractions from 0 to 1. Indices are relative to
-// vacuum unless a glass's Source says otherwise; the glass data in use here were
-// measured in air and are left as published, as the trade leaves them.
+// Celsius), compositions are mole fractions from 0 to 1.
+//
+// Indices are left as published, and papers refer them to one of two media. Solids
+// are measured in air, mostly as a prism in air, and the trade uses their indices as
+// they are; air itself and Water are relative to vacuum. Source.InAir says which. The
+// index of air is 1.00027, so whoever sets a glass against water or air mixes the two
+// and is off by 2.7e-4 of the index, some 4e-4 for a glass, until the glass's index is
+// multiplied by the index of air. Between glasses that are both in air it drops out of
+// NA and V but for the same 2.7e-4 of their value.
 //
 // A glass refuses wavelengths outside the range it was measured over, with an
 // error that matches ErrRange; extrapolating is a choice made by name, see
@@ -40,7 +46,10 @@ var ErrRange = errors.New("outside the range of the glass's data")
 // errNoMedium says that a Medium argument was nil.
 var errNoMedium = errors.New("materials: the medium is nil")
 
-// Index returns the refractive index of m at a vacuum wavelength (m).
+// Index returns the refractive index of m at a vacuum wavelength (m), finite and above
+// 0. A wavelength that is not is refused, and one outside the range of m's data with an
+// error that matches ErrRange; m's own errors are returned as they are. A nil m and an
+// index or derivative of m's that is no number give an error too.
 func Index(m Medium, wavelength float64) (float64, error) {
 	s, err := series(m, wavelength)
 	if err != nil {
@@ -50,7 +59,8 @@ func Index(m Medium, wavelength float64) (float64, error) {
 }
 
 // GroupIndex returns the group index N = n - wavelength dn/dwavelength of m at a
-// vacuum wavelength (m). A pulse travels a length L in the time N L / c.
+// vacuum wavelength (m). A pulse travels a length L in the time N L / c. Wavelengths
+// and errors are those of Index.
 func GroupIndex(m Medium, wavelength float64) (float64, error) {
 	s, err := series(m, wavelength)
 	if err != nil {
@@ -105,7 +115,10 @@ func (c constant) Taylor(wavelength float64) (taylor.Series, error) {
 // 9th ed., 2019, section 2.3.1).
 const zeroCelsius = 273.15
 
-// Celsius returns the temperature in kelvin of a temperature in degrees Celsius.
+// Celsius returns the temperature in kelvin of a temperature in degrees Celsius. It is
+// plain arithmetic like that of package math: it refuses nothing, so that below -273.15
+// the result is below 0, and NaN and the infinities pass through. Whatever takes the
+// temperature refuses them.
 func Celsius(degrees float64) float64 { return degrees + zeroCelsius }
 
 // SpeedOfLight is the speed of light in vacuum in m/s, exact by definition (SI
@@ -113,7 +126,8 @@ func Celsius(degrees float64) float64 { return degrees + zeroCelsius }
 const SpeedOfLight = 299792458.0
 
 // Range is a closed interval, of wavelengths in metres, temperatures in kelvin
-// or mole fractions. The zero Range states nothing and contains everything.
+// or mole fractions. The zero Range states nothing and contains everything finite; one
+// whose From exceeds its To, or with a NaN, is empty and contains nothing.
 type Range struct{ From, To float64 }
 
 // Contains reports whether x lies in the range. The zero Range contains every
@@ -133,8 +147,39 @@ func (r Range) check(function, argument string, x float64, unit string) error {
 	if r.Contains(x) {
 		return nil
 	}
-	return &domain.Error{Func: function, Argument: argument, Value: x,
-		Allowed: fmt.Sprintf("from %v to %v (%s)", r.From, r.To, unit), Kind: ErrRange}
+	// Ten digits: limits given in degrees Celsius are no round numbers of kelvin.
+	allowed := fmt.Sprintf("from %.10g to %.10g (%s)", r.From, r.To, unit)
+	if !(r.From <= r.To) {
+		allowed = fmt.Sprintf("in a range that is not empty: nothing lies from %.10g to %.10g (%s)", r.From, r.To, unit)
+	}
+	return &domain.Error{Func: function, Argument: argument, Value: x, Allowed: allowed, Kind: ErrRange}
+}
+
+// checkWavelength refuses a wavelength that is none (no ErrRange) and one outside r.
+func (r Range) checkWavelength(function string, wavelength float64) error {
+	if err := domain.Positive(function, "wavelength", wavelength, "m"); err != nil {
+		return err
+	}
+	return r.check(function, "wavelength", wavelength, "m")
+}
+
+// checkChange refuses what a ThermoOptic cannot answer: wavelengths outside w, and
+// temperatures outside r. A range need not be stated, but a temperature must: 0 K is
+// one forgotten.
+func (r Range) checkChange(function string, w Range, wavelength, from, to float64) error {
+	if err := w.checkWavelength(function, wavelength); err != nil {
+		return err
+	}
+	if err := r.check(function, "from", from, "K"); err != nil {
+		return err
+	}
+	if err := r.check(function, "to", to, "K"); err != nil {
+		return err
+	}
+	if err := domain.Positive(function, "from", from, "K"); err != nil {
+		return err
+	}
+	return domain.Positive(function, "to", to, "K")
 }
 
 // Source says where a set of coefficients comes from.
@@ -142,4 +187,5 @@ type Source struct {
 	Citation   string // author, journal, year; the equation or table
 	Conditions string // temperature, sample, stated accuracy; may be empty
 	FromMemory bool   // recalled rather than copied from a record
+	InAir      bool   // the index is relative to air; else it is relative to vacuum
 }

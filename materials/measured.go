@@ -1,5 +1,7 @@
 package materials
 
+import "strings"
+
 // measuredRange is where the fits of MeasuredGlasses are accepted (m). The source
 // table states none; the measurements behind it lie in the visible and near
 // infrared (from memory).
@@ -10,6 +12,15 @@ type MeasuredGlass struct {
 	Sellmeier
 	Composition string  // "GeO2:SiO2"
 	Fraction    float64 // mole fraction of the dopant
+}
+
+// dopant is the part of Composition before the silica.
+func (g MeasuredGlass) dopant() string {
+	before, _, doped := strings.Cut(g.Composition, ":")
+	if !doped {
+		return ""
+	}
+	return before
 }
 
 // MeasuredGlasses returns the bulk fibre glasses of fixed composition whose
@@ -27,6 +38,7 @@ func MeasuredGlasses() []MeasuredGlass {
 		Citation:   "J. W. Fleming, J. Am. Ceram. Soc. 59, 503 (1976) and Electron. Lett. 14, 326 (1978); S. H. Wemple et al., J. Appl. Phys. 44, 5432 (1973); as collected in M. J. Adams, An Introduction to Optical Waveguides (Wiley, 1981)",
 		Conditions: "room temperature, in air; the range of wavelengths, 0.4 to 2.5 um, is from memory too",
 		FromMemory: true,
+		InAir:      true,
 	}
 	glass := func(name, composition string, fraction, a1, a2, a3, l1, l2, l3 float64) MeasuredGlass {
 		return MeasuredGlass{

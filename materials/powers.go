@@ -3,7 +3,6 @@ package materials
 import (
 	"math"
 
-	"glassthread/materials/domain"
 	"glassthread/materials/taylor"
 )
 
@@ -32,10 +31,7 @@ type Powers struct {
 // outside Range (the error matches ErrRange) and where the formula gives no real
 // index.
 func (g Powers) Taylor(wavelength float64) (taylor.Series, error) {
-	if err := domain.Positive("materials.Powers", "wavelength", wavelength, "m"); err != nil {
-		return taylor.Series{}, err
-	}
-	if err := g.Range.check("materials.Powers", "wavelength", wavelength, "m"); err != nil {
+	if err := g.Range.checkWavelength("materials.Powers", wavelength); err != nil {
 		return taylor.Series{}, err
 	}
 	var sum taylor.Series
@@ -54,7 +50,8 @@ func (g Powers) Taylor(wavelength float64) (taylor.Series, error) {
 }
 
 // Extrapolate returns the same medium with the range of wavelengths (m) that the
-// caller answers for. The data do not vouch for anything outside Range.
+// caller answers for. The data do not vouch for anything outside Range. An empty range,
+// From above To, refuses every wavelength.
 func (g Powers) Extrapolate(wavelengths Range) Powers {
 	g.Range = wavelengths
 	return g
@@ -72,7 +69,8 @@ func PMMA() Powers {
 		Range: Range{0.42e-6, 1.62e-6},
 		Source: Source{
 			Citation:   "G. Beadie, M. Brindza, R. A. Flynn, A. Rosenberg and J. S. Shirk, Appl. Opt. 54, F139 (2015); open record (CC0) of refractiveindex.info",
-			Conditions: "20.1 C, accuracy 2e-4",
+			Conditions: "20.1 C, accuracy 2e-4; taken to be relative to air (from memory)",
+			InAir:      true,
 		},
 	}
 }

@@ -1,7 +1,6 @@
 package materials
 
 import (
-	"glassthread/materials/domain"
 	"glassthread/materials/taylor"
 )
 
@@ -31,10 +30,7 @@ func (g Sellmeier) Taylor(wavelength float64) (taylor.Series, error) {
 }
 
 func (g *Sellmeier) taylor(wavelength float64) (taylor.Series, error) {
-	if err := domain.Positive("materials.Sellmeier", "wavelength", wavelength, "m"); err != nil {
-		return taylor.Series{}, err
-	}
-	if err := g.Range.check("materials.Sellmeier", "wavelength", wavelength, "m"); err != nil {
+	if err := g.Range.checkWavelength("materials.Sellmeier", wavelength); err != nil {
 		return taylor.Series{}, err
 	}
 	n := oscillators(&g.Terms, wavelength).Shift(1 + g.Offset).Sqrt()
@@ -42,7 +38,8 @@ func (g *Sellmeier) taylor(wavelength float64) (taylor.Series, error) {
 }
 
 // Extrapolate returns the same glass with the range of wavelengths (m) that the
-// caller answers for. The data do not vouch for anything outside Range.
+// caller answers for. The data do not vouch for anything outside Range. An empty range,
+// From above To, refuses every wavelength.
 func (g Sellmeier) Extrapolate(wavelengths Range) Sellmeier {
 	g.Range = wavelengths
 	return g

@@ -8,6 +8,7 @@ const micrometre = 1e-6
 var malitson = Source{
 	Citation:   "I. H. Malitson, J. Opt. Soc. Am. 55, 1205 (1965), the three-term fit of its abstract; open record (CC0) of refractiveindex.info",
 	Conditions: "20 C, in air; the fit covers 0.21 to 3.71 um to about 1e-5, and C. Z. Tan, J. Non-Cryst. Solids 223, 158 (1998) confirms it to 6.7 um",
+	InAir:      true,
 }
 
 // FusedSilica returns pure silica glass at 20 C, 0.21 to 6.7 um (I. H. Malitson,
@@ -40,7 +41,8 @@ func SilicaByGroupIndex() Sellmeier {
 		Range: Range{0.26e-6, 1.7e-6},
 		Source: Source{
 			Citation:   "Y. Arosa and R. de la Fuente, Opt. Lett. 45, 4268 (2020); open record (CC0) of refractiveindex.info",
-			Conditions: "room temperature; fitted to index and dispersion together",
+			Conditions: "room temperature; fitted to index and dispersion together; taken to be relative to air (from memory)",
+			InAir:      true,
 		},
 	}
 }
@@ -54,8 +56,9 @@ var (
 
 var ghosh = Source{
 	Citation:   "G. Ghosh, M. Endo and T. Iwasaki, J. Lightwave Technol. 12, 1338 (1994), table of temperature-dependent Sellmeier coefficients",
-	Conditions: "linear in temperature; fitted to measurements at 26, 471 and 828 C over 0.23 to 3.37 um; below 20 C this is a continuation of the straight lines, taken to -60 C here",
+	Conditions: "linear in temperature; fitted to measurements at 26, 471 and 828 C over 0.23 to 3.37 um; below 20 C this is a continuation of the straight lines, taken to -60 C here; relative to air",
 	FromMemory: true,
+	InAir:      true,
 }
 
 // SilicaAt returns pure silica glass at a temperature from 213.15 to 1101.15 K
@@ -91,6 +94,7 @@ func ghoshSilica(temperature float64) Sellmeier {
 var fleming = Source{
 	Citation:   "J. W. Fleming, Appl. Opt. 23, 4486 (1984): strengths and resonance wavelengths between those of silica (Malitson 1965) and of germania, in proportion to the mole fraction",
 	Conditions: "room temperature, in air",
+	InAir:      true,
 }
 
 // Germania returns pure GeO2 glass, 0.36 to 4.3 um (J. W. Fleming, Appl. Opt. 23,
@@ -107,9 +111,13 @@ func Germania() Sellmeier {
 		Source: Source{
 			Citation:   "J. W. Fleming, Appl. Opt. 23, 4486 (1984); open record (CC0) of refractiveindex.info",
 			Conditions: "room temperature, in air",
+			InAir:      true,
 		},
 	}
 }
+
+// anyFraction is every mole fraction.
+var anyFraction = Range{0, 1}
 
 // GermaniaSilica returns silica glass in which the given mole fraction (0 to 1) of
 // the SiO2 is replaced by GeO2, 0.36 to 4.3 um: each strength and each resonance
@@ -118,7 +126,7 @@ func Germania() Sellmeier {
 // 0.2. At fraction 0 it is FusedSilica over the shorter range. The error of a
 // fraction out of range matches ErrRange.
 func GermaniaSilica(moleFraction float64) (Sellmeier, error) {
-	if err := (Range{0, 1}).check("materials.GermaniaSilica", "moleFraction", moleFraction, "mole fraction"); err != nil {
+	if err := anyFraction.check("materials.GermaniaSilica", "moleFraction", moleFraction, "mole fraction"); err != nil {
 		return Sellmeier{}, err
 	}
 	silica, germania := FusedSilica(), Germania()

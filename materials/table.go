@@ -85,10 +85,7 @@ func (t Table) Taylor(wavelength float64) (taylor.Series, error) {
 	if len(t.knots) == 0 {
 		return taylor.Series{}, errNoTable
 	}
-	if err := domain.Positive("materials.Table", "wavelength", wavelength, "m"); err != nil {
-		return taylor.Series{}, err
-	}
-	if err := t.Range().check("materials.Table", "wavelength", wavelength, "m"); err != nil {
+	if err := t.Range().checkWavelength("materials.Table", wavelength); err != nil {
 		return taylor.Series{}, err
 	}
 	n := t.spline(wavelength)

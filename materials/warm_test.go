@@ -35,7 +35,7 @@ func TestWarmedSilicaIsSilicaAt(t *testing.T) {
 	assert.Less(t, worst, 3e-15)
 }
 
-// A doped core at 60 C: the index rises by what silica's does, 1.07e-5 per K (Ghosh et
+// A glass at 60 C: the index rises by what silica's does, 1.07e-5 per K (Ghosh et
 // al. 1994, from memory), and the group index moves too.
 func TestDopedGlassAt60(t *testing.T) {
 	core := asMedium[Sellmeier](t)(GermaniaSilica(0.05))
@@ -84,6 +84,8 @@ func TestTemperatureOutOfRange(t *testing.T) {
 		"silica": {SilicaThermoOptic{}, Range{Celsius(-60), Celsius(828)}},
 		"water":  {WaterThermoOptic(), Range{Celsius(0), Celsius(30)}},
 		"pmma":   {PMMAThermoOptic(), Range{Celsius(0), Celsius(60)}},
+		"doped":  {GermaniaSilicaThermoOptic{0.05}, Range{Celsius(-60), Celsius(828)}},
+		"air":    {AirThermoOptic(), Range{Celsius(-40), Celsius(80)}},
 	} {
 		inside := []float64{c.ends.From, (c.ends.From + c.ends.To) / 2, c.ends.To}
 		outside := []float64{math.Nextafter(c.ends.From, 0), math.Nextafter(c.ends.To, 1e9), 20, -1, inf, nan}
@@ -158,4 +160,88 @@ func TestCelsius(t *testing.T) {
 	assert.Equal(t, 273.15, Celsius(0))
 	assert.Equal(t, 293.15, Celsius(20))
 	assert.Equal(t, 0.0, Celsius(-273.15))
+	assert.True(t, math.IsNaN(Celsius(nan))) // plain arithmetic, as documented
+	assert.Equal(t, inf, Celsius(inf))
+	_, err := SilicaAt(Celsius(nan))
+	assert.ErrorIs(t, err, ErrRange)
+}
+
+// Undoped it is silica, in every derivative; a fraction that is none is refused.
+func TestGermaniaSilicaThermoOptic(t *testing.T) {
+	for _, x := range grid(0.23e-6, 3.37e-6, 12) {
+		want, err := SilicaThermoOptic{}.Change(x, 280, 330)
+		require.NoError(t, err)
+		got, err := GermaniaSilicaThermoOptic{}.Change(x, 280, 330)
+		require.NoError(t, err)
+		assert.Equal(t, want, got)
+		pure, err := GermaniaSilicaThermoOptic{1}.Change(x, 280, 330)
+		require.NoError(t, err)
+		assert.InDelta(t, 50*1.94e-5, pure[0], 1e-18)
+		half, err := GermaniaSilicaThermoOptic{0.5}.Change(x, 280, 330)
+		require.NoError(t, err)
+		for k := range half {
+			assert.InEpsilon(t, (want[k]+pure[k])/2, half[k], 1e-14, "order %d", k)
+		}
+	}
+	for _, fraction := range []float64{-5e-324, math.Nextafter(1, 2), 3.6, nan, inf, -inf} {
+		_, err := GermaniaSilicaThermoOptic{fraction}.Change(1e-6, 280, 330)
+		var refusal *domain.Error
+		require.ErrorAs(t, err, &refusal, "%v", fraction)
+		assert.Equal(t, "MoleFraction", refusal.Argument)
+		assert.ErrorIs(t, err, ErrRange)
+	}
+	for _, x := range []float64{0.22e-6, 3.38e-6} {
+		_, err := GermaniaSilicaThermoOptic{0.1}.Change(x, 280, 330)
+		assert.ErrorIs(t, err, ErrRange)
+	}
+	assert.Equal(t, Range{0.23e-6, 3.37e-6}, GermaniaSilicaThermoOptic{}.Wavelengths())
+	assert.Contains(t, GermaniaSilicaThermoOptic{}.Source().Citation, "Ghosh")
+}
+
+// Air with temperature: 2.926e-4 at 0 C and 589 nm (common handbook value, from memory),
+// and the temperature term of B. Edlen's formula as revised by K. P. Birch and M. J.
+// Downs, Metrologia 30, 155 (1993; from memory): n - 1 in proportion to
+// (1 + 1e-8 (0.601 - 0.00972 t) p)/(1 + 0.0036610 t), t in C and p in Pa.
+func TestAirWithTemperature(t *testing.T) {
+	at := func(celsius, x float64) float64 {
+		n, err := Index(Warmed{Air(), AirThermoOptic(), Celsius(15), Celsius(celsius)}, x)
+		require.NoError(t, err)
+		return n - 1
+	}
+	assert.InEpsilon(t, 2.926e-4, at(0, 0.5893e-6), 2e-3)
+	birch := func(celsius float64) float64 {
+		return (1 + 1e-8*(0.601-0.00972*celsius)*101325) / (1 + 0.0036610*celsius)
+	}
+	worst := 0.0
+	for celsius := -40.0; celsius <= 80; celsius += 5 {
+		for _, x := range []float64{0.23e-6, 0.5893e-6, 1.55e-6, 1.69e-6} {
+			want := (indexAt(t, Air(), x) - 1) * birch(celsius) / birch(15)
+			worst = math.Max(worst, math.Abs(at(celsius, x)-want))
+		}
+	}
+	t.Logf("ideal gas against Birch and Downs: %.1e in n", worst)
+	assert.Less(t, worst, 2.1e-7) // as AirThermoOptic documents
+	// Density to the dot: twice the temperature is half of n - 1, derivatives too.
+	g := AirThermoOptic()
+	g.Temperatures = Range{}
+	change, err := g.Change(1e-6, g.Reference, 2*g.Reference)
+	require.NoError(t, err)
+	whole := seriesAt(t, Air(), 1e-6).Shift(-1)
+	for k := range change {
+		assert.InEpsilon(t, -whole[k]/2, change[k], 1e-11, "order %d", k) // n - 1 of n
+	}
+	// There and back again, between any two.
+	there, err := g.Change(1e-6, 250, 330)
+	require.NoError(t, err)
+	back, err := g.Change(1e-6, 330, 250)
+	require.NoError(t, err)
+	assert.InDelta(t, 0, there[0]+back[0], 1e-19)
+	assert.Equal(t, Air().Range, g.Wavelengths())
+
+	_, err = GasThermoOptic{Gas: Air()}.Change(1e-6, 300, 310)
+	assert.ErrorContains(t, err, "Reference = 0")
+	_, err = g.Change(1e-6, 5e-324, 300)
+	assert.ErrorContains(t, err, "index change (result)")
+	_, err = g.Change(2e-6, 300, 310)
+	assert.ErrorIs(t, err, ErrRange)
 }

@@ -153,7 +153,8 @@ func (p LP) Series() taylor.Series {
 
 // GroupCurve returns d(V b)/dV, which enters the group index of a weakly guiding
 // fibre with glasses that do not disperse, N = n2 + (n1 - n2) d(V b)/dV (Gloge 1971,
-// equation 18).
+// equation 18). It is for a solved mode, like the other methods: made-up fields may give
+// NaN.
 func (p LP) GroupCurve() float64 {
 	b := p.logSeries()
 	return b[0] + b[1]

@@ -11,7 +11,7 @@ import (
 // most MaxListV, in falling B. None is missed: the number of modes of each order l is
 // the number of zeros of J_{l-1} (for l = 0 of J_1, and LP01) below v. Each label stands
 // once; see Degeneracy. The errors are those of SolveLP. The cost is linear in the
-// number of modes, but for sorting them.
+// number of modes, but for sorting them. AppendGuidedLP saves making the list anew.
 func GuidedLP(v float64) ([]LP, error) {
 	if err := checkV("modes.GuidedLP", v, MaxListV); err != nil {
 		return nil, err
@@ -32,14 +32,7 @@ func AppendGuidedLP(list []LP, v float64) ([]LP, error) {
 		if n == 0 {
 			break
 		}
-		first := len(list)
-		list = appendOrder(list, v, l, n, &last, true)
-		if n > 1 && !(list[len(list)-1].U > list[len(list)-2].U+1) {
-			// The last is solved in its bracket. A root that a trial led astray would
-			// have been met twice: solve all in their brackets.
-			list = appendOrder(list[:first], v, l, n, &last, false)
-		}
-		last.next()
+		list = last.appendOrder(list, v, l, n)
 	}
 	sortModes(list[start:])
 	return list, nil
@@ -94,23 +87,39 @@ func fallingB(a, b LP) int {
 	return a.M - b.M
 }
 
-// appendOrder appends the n modes of order l, from predicted trials where there are.
-func appendOrder(list []LP, v float64, l, n int, last *history, predict bool) []LP {
-	before := 0.0
+// appendOrder appends the n modes of order l, and notes them.
+func (h *history) appendOrder(list []LP, v float64, l, n int) []LP {
+	first := len(list)
+	list, ok := h.appendFrom(list, v, l, n, true)
+	if !ok { // good predictions have never come to this
+		list, _ = h.appendFrom(list[:first], v, l, n, false)
+	}
+	h.next()
+	return list
+}
+
+// appendFrom solves from predicted trials, where there are and it is asked to, and reports
+// whether the labels are certain. They are for roots found in their bracket or by solveLarge,
+// and the last is one of these; a root that a free trial led to a neighbour's is then met
+// twice, while true neighbours differ by more than 1, as j_{l-1,m+1} and j_{l,m} do.
+func (h *history) appendFrom(list []LP, v float64, l, n int, predict bool) ([]LP, bool) {
+	before := -1.0
 	for m := 1; m <= n; m++ {
 		p, ok := LP{L: l, M: m, V: v}, false
-		if u, known := last.guess(m); known && predict && m < n {
+		if u, known := h.guess(m); known && predict && m < n {
 			ok = p.solveLarge(u) || p.solveFreely(u)
 		}
-		// Neighbours differ by more than 1, as j_{l-1,m+1} and j_{l,m} do.
-		if !ok || !(p.U > before+1) {
+		if !ok {
 			p = solveGuided(v, l, m)
 		}
+		if predict && !(p.U > before+1) {
+			return list, false
+		}
 		before = p.U
-		last.note(m, p.U)
+		h.note(m, p.U)
 		list = append(list, p)
 	}
-	return list
+	return list, true
 }
 
 // solveGuided solves a mode that is known to be guided.

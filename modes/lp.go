@@ -66,7 +66,7 @@ func cutoffParts(l, m int) (high, low float64, err error) {
 // is below 1, since W then falls like exp(-1/(V_c (v - V_c))); the rounding of v itself
 // does as much. LP01 is guided at any v, but W falls like exp(-2/v^2), so that a
 // relative error of v grows by 4/v^2, and W underflows to 0 below v = 0.052 (B below
-// 0.073) with U = v.
+// 0.073) with U = v; so do those of LP(0, m) where V_c (v - V_c) is below about 1/700.
 func SolveLP(v float64, l, m int) (LP, error) {
 	const function = "modes.SolveLP"
 	if err := checkLabel(function, l, m); err != nil {

@@ -48,7 +48,7 @@ func solveLP(v float64, l, m int, cut, above, end float64) LP {
 	case cut == 0 && v >= lp01From && v < lp01To:
 		p.solveFit()
 	case cut == 0 && v < lp01From:
-		p.solveSmall()
+		p.solveTiny()
 	case cut > 0 && above < nearCutoff && l == 0:
 		p.solveNearCutoff0(cut, above)
 	case cut > 0 && above < nearCutoff:
@@ -349,55 +349,20 @@ func nearZero(l int, cut, d float64) float64 {
 	return u * f / (nu*f/u - df)
 }
 
-// solveSmall solves LP01 for y = ln w^2 at small v, where w is near exp(-2/v^2).
-func (p *LP) solveSmall() {
+// solveTiny solves LP01 below the range of the fits, where w is below 5e-4. With L = ln(2/w)
+// - gamma and t = w^2/4, from the power series of K_0 and w K_1 (DLMF 10.31.1, 10.31.2),
+//
+//	1/G = L + (L (t + t^2/4) + t + 3 t^2/8 + 2 t L k)/(1 - 2 t k) + O(t^3 L^3),
+//	k = L (1 + t/2) + 1/2 + 5 t/8,
+//
+// and -1/x = 2/s - lessPole(s), s = v^2 - w^2, so that w = exp(-2/v^2) times a factor near
+// 1, which a few passes settle. ln w is never rounded as one number.
+func (p *LP) solveTiny() {
 	v := p.V
 	if v < 0.05 { // w is below the smallest float64
 		p.U = v
 		return
 	}
-	// 1/x = -J_0/(u J_1) = -2/s + 1/4 + s/96 + ..., s = u^2 (power series division of
-	// DLMF 10.2.2).
-	inverse := func(s float64) float64 { return -2/s + lessPole(s) }
-	y := 2 * (logTwoLessGamma + inverse(v*v))
-	if y < -23 {
-		p.solveTiny()
-		return
-	}
-	low, high := -24.0, 2*math.Log(v)
-	for pass := 0; ; pass++ {
-		if !(y > low && y < high) {
-			y = (low + high) / 2
-		}
-		q := math.Exp(y)
-		w := math.Sqrt(q)
-		s := (v - w) * (v + w)
-		ix := inverse(s)
-		g := decay(0, w)
-		f := ix + 1/g
-		if f > 0 {
-			low = y
-		} else {
-			high = y
-		}
-		slope := -q*(ix*ix+1/s)/2 - (g*g-q)/(2*g*g)
-		step := f / slope
-		y -= step
-		if math.Abs(step) < 1e-9 || pass == maxPasses {
-			p.setW(math.Exp(y / 2))
-			return
-		}
-	}
-}
-
-// solveTiny solves LP01 where w is below 1e-5. Then, with L = ln(2/w) - gamma,
-//
-//	1/G = L + w^2 (2 L^2 + 2 L + 1)/4 + O(w^4 L^3)
-//
-// and -1/x = 2/s - lessPole(s), s = v^2 - w^2, so that w = exp(-2/v^2) times a factor
-// near 1, which a few passes settle. ln w is never rounded as one number.
-func (p *LP) solveTiny() {
-	v := p.V
 	s := v * v
 	r := 2 / s
 	rest := (math.FMA(-r, s, 2) - r*math.FMA(v, v, -s)) / s // 2/v^2 is r + rest
@@ -408,8 +373,9 @@ func (p *LP) solveTiny() {
 		less := r * (q / s) / (1 - q/s) // 2/(v^2 - q) - 2/v^2
 		h := 0.0
 		if q > 0 {
-			log := logTwoLessGamma - math.Log(w)
-			h = q / 4 * (2*log*(log+1) + 1)
+			t, log := q/4, logTwoLessGamma-math.Log(w)
+			k := log*(1+t/2) + 0.5 + 0.625*t
+			h = t * (log*(1+t/4) + 1 + 0.375*t + 2*log*k) / (1 - 2*t*k)
 		}
 		w = front * math.Exp(logTwoLessGamma+lessPole(s-q)-rest-less+h)
 	}
@@ -428,9 +394,9 @@ func lessPole(s float64) float64 {
 	return sum
 }
 
-// rayleigh holds the coefficients of lessPole; at s = 2.56 the first left out is below
-// 1e-17.
-var rayleigh = [22]float64{
+// rayleigh holds the coefficients of lessPole; at s = 0.25 the first left out is below
+// 1e-18.
+var rayleigh = [10]float64{
 	0.25,
 	0.010416666666666666667,
 	0.00065104166666666666667,
@@ -441,16 +407,4 @@ var rayleigh = [22]float64{
 	9.2636574115936321159e-10,
 	6.3092678686041423626e-11,
 	4.2972330457407514763e-12,
-	2.9268660967807218446e-13,
-	1.99350805756454484e-14,
-	1.3577927729101492512e-15,
-	9.2480271545225369849e-17,
-	6.298900258868862817e-18,
-	4.2902280314813480831e-19,
-	2.922106387638576483e-20,
-	1.9902685112653707545e-21,
-	1.3555867664430531848e-22,
-	9.2330028399219022716e-24,
-	6.2886672809642644093e-25,
-	4.2832583133496673187e-26,
 }

@@ -67,7 +67,7 @@ const (
 	for _, r := range rows {
 		fmt.Print("{")
 		for _, c := range r {
-			fmt.Printf("%.7g,", float32(c))
+			fmt.Printf("%.5g,", c) // so that rounding in SolveLP does not show
 		}
 		fmt.Println("},")
 	}

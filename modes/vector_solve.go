@@ -183,7 +183,7 @@ func (e *vectorEquation) solveLog(p *Vector, lp LP, cut vectorCut) bool {
 	}
 	// For small q, G = 1/(ln(2/w) - gamma) (DLMF 10.31.2) and 1 - e = 2 (1 - tau)/(2 - tau).
 	left := 2 * e.rest / (2 - e.tau)
-	y := 2 * (lnTwoLessGamma + inverse(0)/left)
+	y := 2 * (logTwoLessGamma + inverse(0)/left)
 	q0 := lp.W * lp.W
 	if y < -40 { // q no longer matters beside V^2
 		q := math.Exp(y)
@@ -225,9 +225,6 @@ func (e *vectorEquation) solveLog(p *Vector, lp LP, cut vectorCut) bool {
 		}
 	}
 }
-
-// lnTwoLessGamma is ln 2 less Euler's constant.
-const lnTwoLessGamma = math.Ln2 - 0.57721566490153286060651209008240243
 
 // inverseX0 returns 1/x_0 = -J_0(u)/(u J_1(u)) at u^2 = v^2 - q, by the power series (DLMF
 // 10.2.2) for small u, which keeps the relative accuracy.

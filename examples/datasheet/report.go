@@ -6,6 +6,7 @@ import (
 
 	"glassthread/dispersion"
 	"glassthread/materials"
+	"glassthread/materials/root"
 	"glassthread/modes"
 	"glassthread/numap"
 	"glassthread/snell"
@@ -16,9 +17,10 @@ type report struct {
 	Recipe     recipe       `json:"recipe"`
 	Cutoffs    []cutoff     `json:"cutoff_wavelengths"`
 	Zeros      []float64    `json:"zero_dispersion_wavelengths_m"`
-	ZeroRange  span         `json:"zero_dispersion_searched_m"`
+	Searched   []span       `json:"zero_dispersion_searched_m"` // where the core guides
 	At         []wavelength `json:"at"`
 	Wavelength span         `json:"glass_range_m"`
+	Notes      []string     `json:"notes"`
 }
 
 type span struct {
@@ -65,38 +67,126 @@ type mode struct {
 }
 
 func (r recipe) report() (*report, error) {
-	fibre, glasses, err := r.fibre()
+	fibre, err := r.fibre()
 	if err != nil {
 		return nil, err
 	}
 	if len(r.Wavelengths) == 0 {
 		return nil, errors.New("wavelengths: at least one is needed")
 	}
-	out := &report{Recipe: r, Wavelength: span{glasses.From, glasses.To}}
+	glasses := fibre.glasses
+	out := &report{Recipe: r, Wavelength: span{glasses.From, glasses.To}, Zeros: []float64{}, Searched: []span{}, Notes: fibre.notes}
 	for _, nm := range r.Wavelengths {
 		if err := positive("wavelength (nm)", nm); err != nil {
 			return nil, err
 		}
-		w, err := at(fibre, nm/1e9)
+		if !glasses.Contains(nm / 1e9) {
+			return nil, fmt.Errorf("wavelength = %v nm: the data of %s and %s hold from %.6g to %.6g nm together", nm,
+				r.Core.Glass, r.Cladding.Glass, glasses.From*1e9, glasses.To*1e9)
+		}
+		w, err := at(fibre.Step, nm/1e9)
+		if errors.Is(err, numap.ErrNotGuiding) {
+			return nil, fmt.Errorf("at %v nm the core (%v) guides no light: its index %.6f is not above the %.6f of the cladding (%v); "+
+				"change a glass or a fraction", nm, r.Core, w.Core, w.Cladding, r.Cladding)
+		}
 		if err != nil {
 			return nil, fmt.Errorf("at %v nm: %w", nm, err)
 		}
 		out.At = append(out.At, *w)
 	}
-	if out.Cutoffs, err = cutoffs(fibre, glasses, out.At); err != nil {
+	if out.Cutoffs, err = cutoffs(fibre.Step, glasses, out.At); err != nil {
 		return nil, err
 	}
-	out.ZeroRange = span{max(glasses.From, 0.8e-6), min(glasses.To, 2e-6)}
-	if out.ZeroRange.To > out.ZeroRange.From {
-		// A core that stops guiding in the range is no error of the sheet's.
-		out.Zeros, err = dispersion.ZeroDispersions(fibre.LP(0, 1), out.ZeroRange.From, out.ZeroRange.To)
-		if err != nil && !errors.Is(err, numap.ErrNotGuiding) {
+	// Below zeroFrom many modes are guided and no one asks for LP01's own zero.
+	if from := max(glasses.From, zeroFrom); from < glasses.To {
+		if out.Searched, err = guiding(fibre.Step, from, glasses.To); err != nil {
 			return nil, err
 		}
 	}
+	for _, s := range out.Searched {
+		zeros, err := dispersion.ZeroDispersions(fibre.LP(0, 1), s.From, s.To)
+		if err != nil {
+			return nil, err
+		}
+		out.Zeros = append(out.Zeros, zeros...)
+	}
+	out.warn()
 	return out, nil
 }
 
+// zeroFrom is the wavelength from which zeros of dispersion are searched (m).
+const zeroFrom = 0.8e-6
+
+const (
+	// weakGuidance is the relative index difference above which the sheet warns of the
+	// approximation (common practice, no source).
+	weakGuidance = 0.02
+	// barely is the share of power in the core below which it warns that the mode is
+	// guided in theory only.
+	barely = 0.01
+)
+
+// warn adds the notes that follow from the figures.
+func (r *report) warn() {
+	for i := range r.At {
+		a := &r.At[i]
+		if a.Delta > weakGuidance {
+			r.note("At %.7g nm the relative index difference is %.1f %%. LP modes are those of weak guidance; the effective "+
+				"indices of the true modes differ by a share of that order.", a.Wavelength*1e9, a.Delta*100)
+		}
+		if share := a.Modes[0].CorePower; share < barely {
+			percent := fmt.Sprintf("%.2g %%", share*100)
+			if share < 1e-4 {
+				percent = "less than 0.01 %"
+			}
+			r.note("At %.7g nm V is %.3g and %s of LP01's power travels in the core: the mode is barely guided, wide "+
+				"beyond any real cladding, and ends at a slight bend.", a.Wavelength*1e9, a.V, percent)
+		}
+	}
+}
+
+func (r *report) note(form string, figures ...any) {
+	r.Notes = append(r.Notes, fmt.Sprintf(form, figures...))
+}
+
+// guiding returns the parts of a range of wavelengths (m) in which the core's index is
+// above the cladding's, without the last 1e-6 before they meet.
+func guiding(fibre modes.Step, from, to float64) ([]span, error) {
+	contrast := func(x float64) (value, slope float64, err error) {
+		n1, err := fibre.Core.Taylor(x)
+		if err != nil {
+			return 0, 0, err
+		}
+		n2, err := fibre.Cladding.Taylor(x)
+		return n1[0] - n2[0], n1[1] - n2[1], err
+	}
+	meet, err := root.All(contrast, from, to, 64)
+	if err != nil {
+		return nil, err
+	}
+	parts := []span{}
+	edges := append(append([]float64{from}, meet...), to)
+	for i := range edges[1:] {
+		s := span{edges[i], edges[i+1]}
+		if i > 0 {
+			s.From *= 1 + 1e-6
+		}
+		if i < len(meet) {
+			s.To *= 1 - 1e-6
+		}
+		middle, _, err := contrast((s.From + s.To) / 2)
+		if err != nil {
+			return nil, err
+		}
+		if s.From < s.To && middle > 0 {
+			parts = append(parts, s)
+		}
+	}
+	return parts, nil
+}
+
+// at returns what holds at the wavelength x (m). With an error of the aperture's it has
+// the indices.
 func at(fibre modes.Step, x float64) (*wavelength, error) {
 	n1, err := materials.Index(fibre.Core, x)
 	if err != nil {
@@ -108,7 +198,7 @@ func at(fibre modes.Step, x float64) (*wavelength, error) {
 	}
 	w := &wavelength{Wavelength: x, Core: n1, Cladding: n2}
 	if w.NA, err = numap.NA(n1, n2); err != nil {
-		return nil, err
+		return w, err
 	}
 	if w.Delta, err = numap.Delta(n1, n2); err != nil {
 		return nil, err
@@ -157,7 +247,7 @@ func cutoffs(fibre modes.Step, glasses materials.Range, at []wavelength) ([]cuto
 	if err != nil {
 		return nil, err
 	}
-	var list []cutoff
+	list := []cutoff{}
 	var labels []modes.StepLP
 	for _, p := range candidates {
 		if p.L == 0 && p.M == 1 {

@@ -4,6 +4,7 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"strconv"
 	"strings"
 	"text/tabwriter"
 
@@ -12,10 +13,6 @@ import (
 )
 
 const degrees = 180 / math.Pi
-
-// weakGuidance is the relative index difference above which the sheet warns of the
-// approximation (common practice, no source).
-const weakGuidance = 0.02
 
 // writeText writes the sheet in the units of the trade, with at most so many modes at
 // each wavelength (0: all).
@@ -44,7 +41,7 @@ func writeText(out io.Writer, r *report, most int) error {
 		columns(name, form, func(a *wavelength) float64 { return figure(&a.Modes[0]) / unit })
 	}
 
-	line(r.Recipe.Name)
+	line(printable(r.Recipe.Name))
 	line("  core", r.Recipe.Core.String())
 	line("  cladding", r.Recipe.Cladding.String())
 	line("  core radius", fmt.Sprintf("%.4g um", r.Recipe.CoreRadius))
@@ -81,7 +78,14 @@ func writeText(out io.Writer, r *report, most int) error {
 		zeros = []string{"none"}
 	}
 	line("Zero dispersion of LP01", strings.Join(zeros, ", "))
-	line(fmt.Sprintf("  (searched from %.0f to %.0f nm)", r.ZeroRange.From*1e9, r.ZeroRange.To*1e9))
+	searched := make([]string, len(r.Searched))
+	for i, s := range r.Searched {
+		searched[i] = fmt.Sprintf("from %.0f to %.0f nm", s.From*1e9, s.To*1e9)
+	}
+	if len(searched) == 0 {
+		searched = []string{"nowhere: the data end before 800 nm"}
+	}
+	line("  (searched " + strings.Join(searched, " and ") + ", where the core guides)")
 
 	line("")
 	line("Cut-off wavelengths", "nm", "V")
@@ -115,20 +119,45 @@ func writeText(out io.Writer, r *report, most int) error {
 				fmt.Sprintf("%.5f", m.B), fmt.Sprintf("%+.4f", m.D/dispersion.PsPerNmKm))
 		}
 	}
-	for _, a := range r.At {
-		if a.Delta > weakGuidance {
-			line("")
-			line(fmt.Sprintf("Note: at %.7g nm the relative index difference is %.1f %%. LP modes are those of weak guidance;",
-				a.Wavelength*1e9, a.Delta*100))
-			line("the effective indices of the true modes differ by a share of that order.")
+	for _, note := range r.Notes {
+		line("")
+		for _, part := range wrap("Note: "+note, 96) {
+			line(part)
 		}
 	}
 	return w.Flush()
 }
 
+// printable writes out as Go does what a terminal would not print as it stands.
+func printable(text string) string {
+	var b strings.Builder
+	for _, r := range text {
+		if strconv.IsPrint(r) {
+			b.WriteRune(r)
+		} else {
+			b.WriteString(strings.Trim(strconv.QuoteRune(r), "'"))
+		}
+	}
+	return b.String()
+}
+
+// wrap breaks a text between words into lines of at most so many bytes, where the words
+// allow it.
+func wrap(text string, width int) []string {
+	var lines []string
+	for _, word := range strings.Fields(text) {
+		if last := len(lines) - 1; last >= 0 && len(lines[last])+1+len(word) <= width {
+			lines[last] += " " + word
+		} else {
+			lines = append(lines, word)
+		}
+	}
+	return lines
+}
+
 func writeGlasses(out io.Writer) error {
 	w := tabwriter.NewWriter(out, 0, 0, 2, ' ', 0)
-	fmt.Fprintln(w, "glass\twavelengths (um)\tmole fraction\tcomposition\tsource")
+	fmt.Fprintln(w, "glass\twavelengths (um)\tmole fraction\tindex at (C)\tand at (C)\tcomposition\tsource")
 	for _, e := range materials.Catalogue() {
 		fraction := "fixed"
 		if e.Fractions != (materials.Range{}) {
@@ -138,8 +167,12 @@ func writeGlasses(out io.Writer) error {
 		if e.Source.FromMemory {
 			source += " (from memory)"
 		}
-		fmt.Fprintf(w, "%s\t%.4g to %.4g\t%s\t%s\t%s\n", e.Name, e.Wavelengths.From*1e6, e.Wavelengths.To*1e6,
-			fraction, e.Composition, source)
+		warm := "not known"
+		if t := e.Temperatures; t.From < t.To {
+			warm = fmt.Sprintf("%.4g to %.4g", inCelsius(t.From), inCelsius(t.To))
+		}
+		fmt.Fprintf(w, "%s\t%.4g to %.4g\t%s\t%.4g\t%s\t%s\t%s\n", e.Name, e.Wavelengths.From*1e6, e.Wavelengths.To*1e6,
+			fraction, inCelsius(e.Temperature), warm, e.Composition, source)
 	}
 	return w.Flush()
 }

@@ -84,6 +84,18 @@ func TestAll(t *testing.T) {
 	zeros, err = All(func(x float64) (float64, float64, error) { return x * (x - 0.5), 2*x - 0.5, nil }, -1, 1, 2)
 	require.NoError(t, err)
 	assert.InDeltaSlice(t, []float64{0, 0.5}, zeros, 1e-15)
+	// Of many zeros none is missed by cells narrower than their distance, while a cell
+	// with three shows one.
+	sine := func(x float64) (float64, float64, error) { return math.Sin(x), math.Cos(x), nil }
+	zeros, err = All(sine, 1, 44*math.Pi-1, 48)
+	require.NoError(t, err)
+	require.Len(t, zeros, 43)
+	for i, x := range zeros {
+		assert.InEpsilon(t, float64(i+1)*math.Pi, x, 1e-15)
+	}
+	zeros, err = All(sine, 1, 4*math.Pi-1, 1)
+	require.NoError(t, err)
+	assert.Len(t, zeros, 1)
 	_, err = All(func(x float64) (float64, float64, error) { return math.NaN(), 0, nil }, -1, 1, 5)
 	assert.ErrorIs(t, err, ErrNotFinite)
 	own := errors.New("own")

@@ -53,8 +53,9 @@
 //
 // Weak corners: JRatio, J and JPair close above x = l at high order, where the recurrence
 // takes l steps and its roundings add up to about 1e-16 (40 + l); KScaled and IScaled at high
-// order, whose error and cost grow with l; the slopes KRatioSlope and IRatioSlope at x far
-// above l, which lose digits like x^2.
+// order, whose error and cost grow with l; the slopes of the ratios, KRatioSlope and
+// IRatioSlope at x far above l, which lose digits like x^2, JRatioSlope and IRatioSlope at x
+// below l, which lose them like 2l + 2.
 package bessel
 
 import (

@@ -134,36 +134,41 @@ func ExampleJPhase() {
 // J_1/J_0 at 2 and its derivative, 1 + j^2 - j/2.
 func ExampleJRatioSlope() {
 	j, _ := bessel.JRatio(0, 2)
-	fmt.Printf("%.6f %.6f\n", j, bessel.JRatioSlope(0, 2, j))
-	// Output: 2.575920 6.347405
+	slope, err := bessel.JRatioSlope(0, 2, j)
+	fmt.Printf("%.6f %.6f %v\n", j, slope, err)
+	// Output: 2.575920 6.347405 <nil>
 }
 
 // K_1/K_0 falls with its argument towards 1.
 func ExampleKRatioSlope() {
 	k, _ := bessel.KRatio(0, 2)
-	fmt.Printf("%.6f %.6f\n", k, bessel.KRatioSlope(0, 2, k))
-	// Output: 1.228037 -0.105944
+	slope, err := bessel.KRatioSlope(0, 2, k)
+	fmt.Printf("%.6f %.6f %v\n", k, slope, err)
+	// Output: 1.228037 -0.105944 <nil>
 }
 
 // I_1/I_0 rises towards 1.
 func ExampleIRatioSlope() {
 	i, _ := bessel.IRatio(0, 2)
-	fmt.Printf("%.6f %.6f\n", i, bessel.IRatioSlope(0, 2, i))
-	// Output: 0.697775 0.164223
+	slope, err := bessel.IRatioSlope(0, 2, i)
+	fmt.Printf("%.6f %.6f %v\n", i, slope, err)
+	// Output: 0.697775 0.164223 <nil>
 }
 
 // e^x K_0(x) falls like the root of 1/x.
 func ExampleKScaledSlope() {
 	value, _ := bessel.KScaled(0, 2)
 	ratio, _ := bessel.KRatio(0, 2)
-	fmt.Printf("%.6f %.6f\n", value, bessel.KScaledSlope(0, 2, value, ratio))
-	// Output: 0.841568 -0.191909
+	slope, err := bessel.KScaledSlope(0, 2, value, ratio)
+	fmt.Printf("%.6f %.6f %v\n", value, slope, err)
+	// Output: 0.841568 -0.191909 <nil>
 }
 
 // e^-x I_0(x) falls like the root of 1/x.
 func ExampleIScaledSlope() {
 	value, _ := bessel.IScaled(0, 2)
 	ratio, _ := bessel.IRatio(0, 2)
-	fmt.Printf("%.6f %.6f\n", value, bessel.IScaledSlope(0, 2, value, ratio))
-	// Output: 0.308508 -0.093239
+	slope, err := bessel.IScaledSlope(0, 2, value, ratio)
+	fmt.Printf("%.6f %.6f %v\n", value, slope, err)
+	// Output: 0.308508 -0.093239 <nil>
 }

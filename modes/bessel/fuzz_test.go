@@ -60,6 +60,22 @@ func FuzzOrderAndArgument(f *testing.F) {
 	})
 }
 
+func FuzzSlopes(f *testing.F) {
+	for _, x := range []float64{0, 5e-324, 1e-250, 1, 30, 1e6, math.Inf(1), math.NaN(), -1} {
+		for _, y := range []float64{0, 1, -3, 1e200, math.MaxFloat64, math.Inf(-1), math.NaN()} {
+			f.Add(3, x, y, y)
+		}
+	}
+	f.Fuzz(func(t *testing.T, l int, x, value, ratio float64) {
+		const most = math.MaxFloat64
+		within(t, "JRatioSlope", -most, most)(JRatioSlope(l, x, ratio))
+		within(t, "KRatioSlope", -most, most)(KRatioSlope(l, x, ratio))
+		within(t, "IRatioSlope", -most, most)(IRatioSlope(l, x, ratio))
+		within(t, "KScaledSlope", -most, most)(KScaledSlope(l, x, value, ratio))
+		within(t, "IScaledSlope", -most, most)(IScaledSlope(l, x, value, ratio))
+	})
+}
+
 func FuzzJZero(f *testing.F) {
 	for _, l := range []int{0, 1, 2, 50, MaxOrder, MaxOrder + 1, -1} {
 		for _, m := range []int{0, 1, 2, 50, MaxOrder, MaxOrder + 1, -1} {

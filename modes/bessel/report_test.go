@@ -130,11 +130,12 @@ func TestSlopesAgainstDifferences(t *testing.T) {
 				y := of(JRatio, l)(x)
 				return math.Atan((y - j) / (1 + y*j))
 			}
-			require.InDelta(t, central(angle, x, h), JRatioSlope(l, x, j)/(1+j*j), 1e-9, "JRatio %d %v", l, x)
-			require.InDelta(t, central(of(KRatio, l), x, h), KRatioSlope(l, x, k), 1e-9*k*k, "KRatio %d %v", l, x)
-			require.InDelta(t, central(of(IRatio, l), x, h), IRatioSlope(l, x, i), 1e-9, "IRatio %d %v", l, x)
-			require.InDelta(t, central(of(KScaled, l), x, h), KScaledSlope(l, x, ks, k), 1e-7*ks*k, "KScaled %d %v", l, x)
-			require.InDelta(t, central(of(IScaled, l), x, h), IScaledSlope(l, x, is, i), 1e-7*is*(1+float64(l)/x), "IScaled %d %v", l, x)
+			slope := func(y float64, err error) float64 { require.NoError(t, err); return y }
+			require.InDelta(t, central(angle, x, h), slope(JRatioSlope(l, x, j))/(1+j*j), 1e-9, "JRatio %d %v", l, x)
+			require.InDelta(t, central(of(KRatio, l), x, h), slope(KRatioSlope(l, x, k)), 1e-9*k*k, "KRatio %d %v", l, x)
+			require.InDelta(t, central(of(IRatio, l), x, h), slope(IRatioSlope(l, x, i)), 1e-9, "IRatio %d %v", l, x)
+			require.InDelta(t, central(of(KScaled, l), x, h), slope(KScaledSlope(l, x, ks, k)), 1e-7*ks*k, "KScaled %d %v", l, x)
+			require.InDelta(t, central(of(IScaled, l), x, h), slope(IScaledSlope(l, x, is, i)), 1e-7*is*(1+float64(l)/x), "IScaled %d %v", l, x)
 		}
 	}
 }
