@@ -62,16 +62,16 @@ func At(m materials.Medium, wavelength float64) (Chromatic, error) {
 	x2 := x * x
 	h2, h3, h4 := n[2]*x2, n[3]*x2*x, n[4]*x2*x2
 	w := 2 * math.Pi * c / x
-	r := Chromatic{
+	r := Chromatic{ // 0 - y rather than -y: no dispersion is 0, not -0
 		Wavelength: x,
 		Index:      n[0],
 		GroupIndex: n[0] - x*n[1],
-		D:          -2 * x * n[2] / c,
-		Slope:      -(2*n[2] + 6*x*n[3]) / c,
+		D:          0 - 2*x*n[2]/c,
+		Slope:      0 - (2*n[2]+6*x*n[3])/c,
 		// With w -> w(1+t), d = -t/(1+t), so that beta in units of w/c is
 		// (1+t) n = h_0 (1+t) - h_1 t + h_2 t^2/(1+t) - h_3 t^3/(1+t)^2 + ...
 		Beta2: 2 * h2 / (w * c),
-		Beta3: -6 * (h2 + h3) / (w * w * c),
+		Beta3: 0 - 6*(h2+h3)/(w*w*c),
 		Beta4: 24 * (h2 + 2*h3 + h4) / (w * w * w * c),
 	}
 	return r, r.check()
@@ -105,7 +105,10 @@ func (r *Chromatic) check() error {
 }
 
 // GroupDelay returns the time that a pulse takes per length, N/c (s/m), in a medium at a
-// vacuum wavelength (m).
+// vacuum wavelength (m), which must be finite, above 0 and where the medium answers. The
+// errors are those of materials.GroupIndex, the medium's own among them. The result is
+// good to about 1e-15 of itself; within 1 % of a mode's cut-off, to what a change of 1e-13
+// in wavelength does to it.
 func GroupDelay(m materials.Medium, wavelength float64) (float64, error) {
 	n, err := materials.GroupIndex(m, wavelength)
 	return n / materials.SpeedOfLight, err

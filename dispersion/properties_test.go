@@ -66,6 +66,7 @@ func TestConstantMedium(t *testing.T) {
 	assert.Equal(t, 1.45, r.GroupIndex)
 	for _, x := range []float64{r.D, r.Slope, r.Beta2, r.Beta3, r.Beta4} {
 		assert.Zero(t, x)
+		assert.False(t, math.Signbit(x), "printed as %v", x)
 	}
 	delay, err := GroupDelay(materials.Constant(1.45), 1.3e-6)
 	require.NoError(t, err)
@@ -139,6 +140,7 @@ func zeroAt(zeros ...float64) medium {
 func TestKnownZeros(t *testing.T) {
 	for _, zeros := range [][]float64{
 		{1.31e-6}, {1.3e-6, 1.62e-6}, {1.4e-6, 1.4001e-6}, {1.4e-6, 1.40000001e-6}, {1.1e-6, 1.3e-6, 1.7e-6}, {1e-6, 2e-6}, {},
+		{1.4e-6, 1.43e-6, 1.46e-6}, {1.36e-6, 1.4e-6, 1.401e-6, 1.45e-6, 1.48e-6},
 	} {
 		m := zeroAt(zeros...)
 		got, err := ZeroDispersions(m, 1e-6, 2e-6)
@@ -154,6 +156,30 @@ func TestKnownZeros(t *testing.T) {
 		}
 		require.NoError(t, err)
 		assert.Equal(t, got[0], first)
+	}
+}
+
+// ripple is the index 1.45 - height sin(k (x - 1 um)), k such that it has the given number
+// of half waves in 1 um. D is zero at the ends of each.
+func ripple(height float64, halves int) medium {
+	k := math.Pi * float64(halves) / 1e-6
+	return func(x float64) (taylor.Series, error) {
+		s, c := math.Sincos(k * (x - 1e-6))
+		sin := taylor.Series{s, k * c, -k * k * s / 2, -k * k * k * c / 6, k * k * k * k * s / 24}
+		return sin.Scale(-height).Shift(1.45), nil
+	}
+}
+
+// Many zeros close together: none is missed while a cell of the search, a 48th of the
+// range, is narrower than their distance.
+func TestManyZeros(t *testing.T) {
+	for _, halves := range []int{10, 20, 31, 45} {
+		got, err := ZeroDispersions(ripple(1e-6, halves), 1.0001e-6, 1.9999e-6)
+		require.NoError(t, err)
+		require.Len(t, got, halves-1)
+		for i, x := range got {
+			assert.InEpsilon(t, 1e-6+1e-6*float64(i+1)/float64(halves), x, 1e-14)
+		}
 	}
 }
 

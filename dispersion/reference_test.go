@@ -68,6 +68,57 @@ func TestModesAgainstTable(t *testing.T) {
 	plain.Check(t, "d, 1 % above cut-off and away from its zero", 1e-9)
 }
 
+// The causes of D one at a time, by their definitions: the power in the core from the
+// integrals of the fields, D with the field frozen and D with the glasses frozen. Each
+// error is held against 1e-11 of the quantity plus what a change of 1e-13 in wavelength
+// does to it: to the waveguide's part by its slope, to the material's by the power that
+// moves from one glass to the other.
+func TestPartsAgainstTable(t *testing.T) {
+	var power, material, waveguide, profile, plainPower, plainMaterial, plainWaveguide reftable.Errors
+	for _, r := range reftable.Read(t, "testdata/step.csv", 200) {
+		f := germaniaStep(t, r.Float("core_fraction"), r.Float("radius"))
+		x := r.Float("wavelength")
+		mode := f.LP(r.Int("l"), r.Int("m"))
+		got, err := Split(mode, x)
+		require.NoError(t, err, r)
+		lp, err := mode.Solve(x)
+		require.NoError(t, err)
+		_, guide, err := mode.Parts(x)
+		require.NoError(t, err)
+
+		const c, move = materials.SpeedOfLight, 1e-13
+		// By Gloge 1971, equation 27, V dP/dV = (V db/dV + V d2(Vb)/dV2)/2.
+		swing := math.Abs(lp.GroupCurve()-lp.B+lp.DispersionCurve()) / 2
+		exchange := swing * math.Abs(at(t, f.Core, x).D-at(t, f.Cladding, x).D)
+		slope := math.Abs(2*guide[2]+6*x*guide[3]) / c
+		share := func(name string, got, change float64) float64 {
+			return math.Abs(r.Difference(name, got)) / (1e-11*math.Abs(got) + move*change)
+		}
+		power.Add(share("core_power", lp.CorePower(), swing), r)
+		material.Add(share("d_material", got.Material, exchange), r)
+		waveguide.Add(share("d_waveguide", got.Waveguide, x*slope), r)
+		whole := at(t, mode, x)
+		rest := r.Float("d") - r.Float("d_material") - r.Float("d_waveguide")
+		sizes := math.Abs(got.D) + math.Abs(got.Material) + math.Abs(got.Waveguide)
+		profile.Add(math.Abs(got.Profile-rest)/(1e-11*sizes+move*(x*math.Abs(whole.Slope)+exchange+x*slope)), r)
+
+		cut, err := modes.CutoffV(lp.L, lp.M)
+		require.NoError(t, err)
+		if lp.V > 1.01*cut {
+			plainPower.Add(r.Relative("core_power", lp.CorePower()), r)
+			plainMaterial.Add(r.Relative("d_material", got.Material), r)
+			plainWaveguide.Add(r.Relative("d_waveguide", got.Waveguide), r)
+		}
+	}
+	power.Check(t, "core power over its limit", 1)
+	material.Check(t, "material over its limit", 1)
+	waveguide.Check(t, "waveguide over its limit", 1)
+	profile.Check(t, "profile over its limit", 1)
+	plainPower.Check(t, "core power, 1 % above cut-off", 5e-12)
+	plainMaterial.Check(t, "material, 1 % above cut-off", 2e-13)
+	plainWaveguide.Check(t, "waveguide, 1 % above cut-off", 2e-11)
+}
+
 func TestZerosAgainstTable(t *testing.T) {
 	var zero, cutoff reftable.Errors
 	for _, r := range reftable.Read(t, "testdata/zeros.csv", 10) {

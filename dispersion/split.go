@@ -55,8 +55,8 @@ func Split(mode Separable, wavelength float64) (Parts, error) {
 	}
 	p := Parts{
 		D:         whole.D,
-		Material:  -2 * wavelength * material[2] / materials.SpeedOfLight,
-		Waveguide: -2 * wavelength * waveguide[2] / materials.SpeedOfLight,
+		Material:  0 - 2*wavelength*material[2]/materials.SpeedOfLight, // 0 has no sign
+		Waveguide: 0 - 2*wavelength*waveguide[2]/materials.SpeedOfLight,
 	}
 	p.Profile = p.D - p.Material - p.Waveguide
 	return p, domain.Result("dispersion.Split", "dispersion", p.Profile)

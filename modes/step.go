@@ -35,7 +35,10 @@ func (f Step) V(wavelength float64) (float64, error) {
 	return numap.V(f.Radius, na, wavelength)
 }
 
-// NA returns the numerical aperture sqrt(n1^2 - n2^2) at a vacuum wavelength (m).
+// NA returns the numerical aperture sqrt(n1^2 - n2^2) at a vacuum wavelength (m) where
+// both glasses answer; their errors are passed on. The radius, though it does not enter,
+// must be above 0. The error matches numap.ErrNotGuiding where the core's index does not
+// exceed the cladding's.
 func (f Step) NA(wavelength float64) (float64, error) {
 	n1, n2, err := f.glasses("modes.Step.NA", wavelength)
 	if err != nil {

@@ -204,6 +204,33 @@ func TestCrossingGlasses(t *testing.T) {
 	t.Logf("LP11 guided from %.4g m to %.4g m, cut-off wavelength %.6g m", onset, gone, x)
 }
 
+// A core whose V^2 swings about the cut-off of LP11, made so that V^2/V_c^2 = 1 + 3 sin(k
+// (x - 1 um)) with 30 half waves in 1 um; a third of the time its index is below the
+// cladding's. LP11 dies at the end of every first half wave; the longest one counts.
+func TestManyCutoffs(t *testing.T) {
+	const radius, cladding, halves = 4e-6, 1.45, 30
+	cut, err := CutoffV(1, 1)
+	require.NoError(t, err)
+	k := math.Pi * halves / 1e-6
+	core := medium(func(x float64) (taylor.Series, error) {
+		s, c := math.Sincos(k * (x - 1e-6))
+		v2 := taylor.Series{3 * s, 3 * k * c, -3 * k * k * s / 2, -k * k * k * c / 2, k * k * k * k * s / 8}.Shift(1)
+		perV := taylor.Variable(x).Scale(cut / (2 * math.Pi * radius))
+		return perV.Square().Mul(v2).Shift(cladding * cladding).Sqrt(), nil
+	})
+	mode := Step{radius, core, materials.Constant(cladding)}.LP(1, 1)
+	for i := 1; i < halves; i++ {
+		want := 1e-6 + 1e-6*float64((i-1)/2*2+1)/halves // i = 1, 2: the first; 3, 4: the second
+		x, err := mode.CutoffWavelength(1.001e-6, 1e-6+1e-6*(float64(i)+0.5)/halves)
+		require.NoError(t, err)
+		assert.InEpsilon(t, want, x, 1e-14, "%d half waves", i)
+		_, err = mode.Solve(x * (1 - 1e-12))
+		assert.NoError(t, err)
+		_, err = mode.Solve(x * (1 + 1e-12))
+		assert.ErrorIs(t, err, ErrCutoff)
+	}
+}
+
 func TestLabels(t *testing.T) {
 	for want, label := range map[string][2]int{"LP01": {0, 1}, "LP11": {1, 1}, "LP99": {9, 9},
 		"LP(10,1)": {10, 1}, "LP(2,10)": {2, 10}, "LP(-1,1)": {-1, 1}} {

@@ -6,7 +6,8 @@ import "math"
 // its slope. The interval is cut into the given number of equal cells; a cell yields
 // one zero where the sign changes, and two where it does not but the slopes show a
 // turning point between, beyond which it does. So a pair of zeros is missed only if
-// it shares a cell with a further turning point. Of a stretch where f is zero
+// it shares a cell with a further turning point, or if one of them falls on a cell's end and
+// the other within 1e-6 of the cell beyond it. Of a stretch where f is zero
 // throughout only the ends of cells may be named. An error of f ends the search.
 func All(f func(float64) (value, slope float64, err error), a, b float64, cells int) ([]float64, error) {
 	value := func(x float64) (float64, error) { y, _, err := f(x); return y, err }
