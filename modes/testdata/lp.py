@@ -368,4 +368,5 @@ def main():
           f"{by_differences} against divided differences", file=sys.stderr)
 
 
-main()
+if __name__ == "__main__":
+    main()
