@@ -22,6 +22,27 @@
 // negative pivots of T there (Sylvester's law of inertia): every mode is bracketed by
 // counts, and none can be missed or listed twice. The count belongs to the discrete
 // problem; it is that of the fibre as soon as the elements resolve the field.
+//
+// # Errors and times
+//
+// Against tables of mpmath at 62 to 90 digits (testdata/radial.py), and SolveLP for the step:
+//
+//	quantity                                values   mean     worst
+//	b, truncated parabola                      287   5e-15    4e-14
+//	b, 16 layered profiles                     498   7e-15    3e-13
+//	b, powers 1 to 10                          173   1e-14    4e-13
+//	b, step, V 0.5 to 100                     2134   1e-15    5e-14
+//	cut-off V, relative                        142   2e-14    7e-13
+//	d(Vb)/dV, parabola                         251   3e-14    1e-12
+//	V d2(Vb)/dV2, parabola                     251   4e-13    6e-12
+//
+// "go test -v ./modes/radial" prints them. Weak corners: layers thinner than a thousandth of
+// the radius, where the rounding of the elements' large entries costs up to 4e-11 in b, and
+// modes with b below 1e-13, which are not listed. All modes of a profile in one call take 10
+// to 20 us each; SolveField, Series and CutoffV of one mode 40 us to 4 ms.
+//
+// Guided, Solve, Series, SolveField and CutoffV are scalar; GuidedVector and its like are the
+// exact vector modes by the same means, and Leaky finds the scalar modes beyond cut-off.
 package radial
 
 import (
@@ -61,7 +82,7 @@ const MaxV = 1000
 // maxElements bounds the elements of a mesh.
 const maxElements = 4096
 
-// resolution is the largest V h sqrt(max |f|) on an element of width h: with degree 12 it
+// resolution is the largest V h sqrt(max |f - b|) on an element of width h: with degree 12 it
 // leaves an error of 1e-12 in b or below (measured, see the tests).
 const resolution = 6
 
@@ -103,50 +124,132 @@ type element struct {
 	stiff      [degree + 1][degree + 1]float64
 }
 
+// samples is at how many radii a piece's F is looked at for the mesh, ends included.
+const samples = 65
+
+// ratio is the largest ratio of the radii at the ends of an element that does not reach the
+// axis: next to a small hole the field is like r^-l or ln r.
+const ratio = 2.5
+
+// leastHole is the radius, over that of the piece around it, of a hole whose area, 1e-18 of
+// the whole, is not felt.
+const leastHole = 1e-9
+
 // mesh cuts the profile into elements for a given v.
 func (p Profile) mesh(v float64) ([]element, error) {
-	var list []element
+	// With b from 0 to the highest f of all, the wave number is at most v sqrt(|f - b|).
+	type span struct{ low, high float64 }
+	spans := make([]span, len(p.Pieces))
+	top := 0.0
 	for i, q := range p.Pieces {
-		steep := 0.0
-		for k := range 65 {
-			x := q.From + (q.To-q.From)*float64(k)/64
+		s := span{math.Inf(1), math.Inf(-1)}
+		for k := range samples {
+			x := q.From + (q.To-q.From)*float64(k)/(samples-1)
 			f := q.F(x)
 			if !(math.Abs(f) <= math.MaxFloat64) {
 				return nil, &domain.Error{Func: "radial", Argument: fmt.Sprintf("Pieces[%d].F(%v)", i, x), Value: f, Allowed: "finite"}
 			}
-			steep = math.Max(steep, math.Abs(f))
+			s.low, s.high = math.Min(s.low, f), math.Max(s.high, f)
 		}
+		spans[i] = s
+		top = math.Max(top, s.high)
+	}
+	var list []element
+	for i, q := range p.Pieces {
+		wave := v * math.Sqrt(math.Max(top-spans[i].low, spans[i].high))
 		cuts := []float64{q.To}
 		low := q.From
-		if low == 0 && q.Graded {
-			// Towards the axis each element is a fifth of the one outside it.
-			for x := q.To / 5; x > q.To*2e-3; x /= 5 {
-				cuts = append(cuts, x)
-			}
-		} else if low > 0 {
-			// Next to a small hole the field is like r^-l or ln r.
-			for x := q.To / 4; x > low; x /= 4 {
+		if low > 0 {
+			for x := q.To / ratio; x > math.Max(low, leastHole*q.To); x /= ratio {
 				cuts = append(cuts, x)
 			}
 		}
 		for j := len(cuts) - 1; j >= 0; j-- {
 			high := cuts[j]
-			n := max(1, int(math.Ceil(v*(high-low)*math.Sqrt(steep)/resolution)))
-			if len(list)+n > maxElements {
-				return nil, &domain.Error{Func: "radial", Argument: "v", Value: v, Allowed: "less: the profile would take over 4096 elements"}
-			}
+			n := max(1, int(math.Ceil(math.Min(wave*(high-low)/resolution, maxElements+1))))
 			for k := range n {
 				a := low + (high-low)*float64(k)/float64(n)
 				b := low + (high-low)*float64(k+1)/float64(n)
 				if k == n-1 {
 					b = high
 				}
-				list = append(list, newElement(i, a, b, q.F))
+				list = refine(list, i, a, b, wave, &q, 0)
+				if len(list) > maxElements {
+					return nil, &domain.Error{Func: "radial", Argument: "v", Value: v, Allowed: "less: the profile would take over 4096 elements"}
+				}
 			}
 			low = high
 		}
 	}
 	return list, nil
+}
+
+// maxHalvings bounds how often refine halves an element.
+const maxHalvings = 10
+
+// refine appends an element, or two parts where F varies too fast for it. Towards a cusp at the
+// axis each element is a fifth of the one outside it.
+func refine(list []element, piece int, a, b, wave float64, q *Piece, depth int) []element {
+	e := newElement(piece, a, b, q.F)
+	middle, least := a+(b-a)/2, leastAliasing
+	if q.Graded && a == 0 {
+		middle, least = b/5, leastAliasing/100 // the parts not seen fall slowly
+	}
+	if depth < maxHalvings && len(list) <= maxElements && aliasing(&e.f, wave*(b-a))*(b-a)*b > least {
+		list = refine(list, piece, a, middle, wave, q, depth+1)
+		return refine(list, piece, middle, b, wave, q, depth+1)
+	}
+	return append(list, e)
+}
+
+// leastAliasing is the error of b from the quadrature over one element that is let stand.
+const leastAliasing = 3e-14
+
+// aliasing estimates the error of the quadrature of f psi^2 over an element that is x wave
+// lengths over 2 pi wide. The rule being exact up to degree 2 degree - 1, what f holds of the
+// Legendre polynomial of degree j meets the part of psi^2 of degree n = 2 degree - j, which
+// is at most (2n + 1) j_n(x) or about x^n/(2n - 1)!! for an oscillating psi.
+func aliasing(f *[degree + 1]float64, x float64) float64 {
+	low, high := f[0], f[0]
+	for _, y := range f {
+		low, high = math.Min(low, y), math.Max(high, y)
+	}
+	if high-low <= 1e-15*math.Max(high, -low) {
+		return 0 // what resolution allows for
+	}
+	var c [degree + 1]float64 // Legendre coefficients times their norms
+	for i, y := range f {
+		y *= gllWeights[i]
+		z, before, now := gllNodes[i], 0.0, 1.0
+		for j := range c {
+			c[j] += y * now
+			before, now = now, (float64(2*j+1)*z*now-float64(j)*before)/float64(j+1)
+		}
+	}
+	top, tail := 0.0, 0.0
+	for j := range c {
+		c[j] = (float64(j) + 0.5) * math.Abs(c[j])
+		top = math.Max(top, c[j])
+		if j >= degree-1 {
+			tail = math.Max(tail, c[j])
+		}
+	}
+	fall := math.Pow(tail/top, 1.0/degree)
+	// From degree 2 degree down, those that are not seen as if they fell like the ones seen.
+	for range degree {
+		tail *= fall
+	}
+	sum, part := tail, 1.0
+	for n := 1; n < 2*degree; n++ {
+		part *= x / float64(2*n-1)
+		if j := 2*degree - n; j > degree {
+			tail /= fall
+			sum += tail * math.Min(part, 1)
+		} else {
+			sum += c[j] * math.Min(part, 1)
+		}
+	}
+	return sum
 }
 
 func newElement(piece int, a, b float64, f func(float64) float64) (e element) {
