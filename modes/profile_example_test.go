@@ -4,7 +4,6 @@ import (
 	"errors"
 	"fmt"
 
-	"glassthread/dispersion"
 	"glassthread/materials"
 	"glassthread/modes"
 )
@@ -111,8 +110,10 @@ func ExampleLayer() {
 	}
 	silica, err := materials.GermaniaSilica(0)
 	f := modes.Layered{Layers: []modes.Layer{{Outer: radius, Vary: fall}}, Cladding: silica}
-	c, err2 := dispersion.At(f.LP(0, 1), 1.55e-6)
-	fmt.Printf("group index %.5f, D %.2f ps/(nm km) %v %v\n", c.GroupIndex, c.D/dispersion.PsPerNmKm, err, err2)
+	const x = 1.55e-6
+	n, err2 := f.LP(0, 1).Taylor(x)
+	group, d := n[0]-x*n[1], -2*x*n[2]/materials.SpeedOfLight // as dispersion.At has them
+	fmt.Printf("group index %.5f, D %.2f ps/(nm km) %v %v\n", group, d/1e-6, err, err2)
 	// Output:
 	// group index 1.47414, D 19.61 ps/(nm km) <nil> <nil>
 }
